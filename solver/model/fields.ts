@@ -6,6 +6,9 @@
  */
 import { z } from 'zod';
 
+// Must come before any object schema: zod otherwise probes for `new Function`, which a strict content policy reports.
+z.config({ jitless: true });
+
 /** Bounds of a number; `above` and `below` exclude the bound itself, `atLeast` and `atMost` include it. */
 export interface Bounds {
   above?: number;

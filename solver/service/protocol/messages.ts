@@ -1,18 +1,24 @@
 /**
  * The conversation between an app (or command) and its solver: plain data over a port.
  *
- * Both ways in one place: a job is asked for by `solve`, answered by progress, answers and frames, and ended by exactly one
- * `done` or `failed`. A newer revision of a plan supersedes the older job.
+ * Both ways in one place. The solver speaks first: `ready`, with its version. A job is asked for by `solve`, answered by
+ * progress, answers and frames, and ended by exactly one `done` or `failed`. A newer job supersedes the older one; `cancel`
+ * ends a running job by a `done` whose outcome is `cancelled` and whose answers reach as far as the run came.
  */
 import type { Frames, Outcome, Project, RunResult } from '../../model';
+import type { FailureCode } from './failures';
 
 /** Carried by the first message; a solver and an app of different versions do not talk. */
 export const PROTOCOL_VERSION = 1;
 
 export type ToSolver =
+  /** Job numbers rise; `revision` is the plan's, and comes back with every message about the job. At least one case. */
   | { type: 'solve'; job: number; revision: number; cases: Project[] }
   | { type: 'cancel'; job: number }
   | { type: 'ping'; id: number };
+
+/** A run without its frames, which travel by themselves. */
+export type Answered = Omit<RunResult, 'frames'>;
 
 export type FromSolver =
   | { type: 'ready'; protocol: number }
@@ -29,20 +35,12 @@ export type FromSolver =
       fraction: number;
     }
   /** All that is known of a case except its frames; `final` says that nothing will change any more. */
-  | { type: 'answers'; job: number; revision: number; case: number; final: boolean; result: Omit<RunResult, 'frames'> }
+  | { type: 'answers'; job: number; revision: number; case: number; final: boolean; result: Answered }
   /** Frames of a case, their buffers transferred. */
   | { type: 'frames'; job: number; revision: number; case: number; frames: Frames }
+  /** One outcome a case; a case that was never begun is `cancelled` at 0 s. */
   | { type: 'done'; job: number; revision: number; outcomes: Outcome[] }
   | { type: 'failed'; job: number; revision: number; code: FailureCode; message: string };
 
-/** Why a job could not be carried out: cancelled, connection lost, refused and broken are four different things. */
-export const FAILURES = {
-  cancelled: 'The run was cancelled.',
-  superseded: 'A newer edit took the place of this run.',
-  'not-understood': 'The solver did not understand the message.',
-  'invalid-project': 'The plan has a problem that keeps it from running.',
-  'solver-gone': 'The solver ended and was started again.',
-  'solver-silent': 'The solver did not answer any more and was started again.',
-  broken: 'The solver met a fault of its own.',
-} as const;
-export type FailureCode = keyof typeof FAILURES;
+/** Messages about a job, as opposed to the connection. */
+export type AboutJob = Extract<FromSolver, { job: number }>;

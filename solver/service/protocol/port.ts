@@ -5,3 +5,15 @@ export interface Port {
   listen(handler: (message: unknown) => void): () => void;
   close(): void;
 }
+
+/** A running solver as seen from outside: its port, and notice of its end. */
+export interface Link {
+  readonly port: Port;
+  /** Called once when the solver has ended by itself; returns what stops listening. */
+  onExit(handler: (reason: string) => void): () => void;
+  /** Ends it, without notice. */
+  kill(): void;
+}
+
+/** A clock's one duty here: to call back after `wait_ms`; returns what calls it off. */
+export type After = (wait_ms: number, call: () => void) => () => void;
