@@ -48,12 +48,19 @@ export interface Answer {
 
 /** The answers that come unasked, from the dense field at every step; null where nothing changes. */
 export interface FirstAnswers {
-  /** Place last to close 95 % of its own change in the stage looked at. */
-  slowest: { position_m: number; layer: string; stage: string; time_s: number } | null;
+  /** Of the last stage that heats, or, if none heats, of the last one that changes. */
+  slowest: Slowest | null;
   hottest: { position_m: number; layer: string; time_s: number; temperature_C: number } | null;
   largestDifference: LargestDifference | null;
   /** Largest difference within one piece of one material. */
   largestDifferenceInMaterial: (LargestDifference & { material: string }) | null;
+}
+/** The place last to close 95 % of its own change in a stage; time in cycle time, layer and stage by id. */
+export interface Slowest {
+  position_m: number;
+  layer: string;
+  stage: string;
+  time_s: number;
 }
 export interface LargestDifference {
   value_K: number;
@@ -62,7 +69,7 @@ export interface LargestDifference {
   between: [number, number];
 }
 
-/** History of a probe: every step and every extreme, double precision. */
+/** History of a probe: every step, every extreme and every output row, double precision. A jump is two rows at one time. */
 export interface ProbeHistory {
   probe: string;
   name: string;
@@ -71,7 +78,7 @@ export interface ProbeHistory {
   temperature_C: Float64Array;
 }
 
-/** A quantity over the whole field at every step, for the difference lane. */
+/** Quantities over the whole field at every step and every output row, for the difference lane. */
 export interface FieldHistory {
   time_s: Float64Array;
   coldest_C: Float64Array;
@@ -93,12 +100,14 @@ export interface Frames {
   faceFlux_W_m2: Float32Array;
 }
 
-/** Times of the stages as they came out. */
+/** A stage as it came out: its times, and the place in it that was last to close 95 % of its own change. */
 export interface StageTimes {
   stage: string;
   name: string;
   start_s: number;
   end_s: number;
+  /** null where nothing changes by 1 K or more, or where the run did not come. */
+  slowest: Slowest | null;
 }
 
 export interface Energy {
