@@ -1,0 +1,4 @@
+/** Doors of grid: where the unknowns of a part sit, where its field is reported, and how to read it at any depth. */
+export { fieldPoints, type FieldPoints } from './points';
+export { layerAt, stencilAt, type Stencil } from './stencil';
+export { equalGrid, type WallGrid } from './wallGrid';

@@ -1,0 +1,20 @@
+/** Grids of a plane wall: where the unknowns sit. No physics beyond what chooses their number. */
+
+/** A wall cut into elements, layer by layer from the start face. */
+export interface WallGrid {
+  /** nodes: unknowns on the faces, the layer edges and the ends of all elements; cells: at the centres of the elements. */
+  readonly kind: 'nodes' | 'cells';
+  /** Lengths of the elements of every layer, m. Lengths, not positions: a thin layer deep in the part keeps its digits. */
+  readonly elements: readonly Float64Array[];
+  /** Thickness of every layer, m. */
+  readonly thickness: readonly number[];
+}
+
+/** The same number of equal elements over the whole of each layer. */
+export function equalGrid(kind: WallGrid['kind'], thickness: readonly number[], elements: readonly number[]): WallGrid {
+  return {
+    kind,
+    thickness,
+    elements: thickness.map((whole, layer) => new Float64Array(elements[layer]).fill(whole / elements[layer])),
+  };
+}
