@@ -6,7 +6,13 @@ import tseslint from 'typescript-eslint';
 import { roomsRule } from './eslint/rooms.js';
 
 const without = (names, ...others) => Object.keys(names).filter((name) => !others.some((other) => name in other));
-const domOnly = without(globals.browser, globals.node, globals.builtin);
+const domOnly = [
+  ...without(globals.browser, globals.node, globals.builtin),
+  'localStorage',
+  'sessionStorage',
+  'navigator',
+  'Storage',
+];
 const nodeOnly = without(globals.node, globals.browser, globals.builtin);
 const network = ['fetch', 'XMLHttpRequest', 'WebSocket', 'EventSource'];
 
