@@ -51,7 +51,7 @@ export default tseslint.config(
         { fixStyle: 'inline-type-imports', disallowTypeAnnotations: false },
       ],
       '@typescript-eslint/no-non-null-assertion': 'error',
-      '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_' }],
+      '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', ignoreRestSiblings: true }],
       'vue/multi-word-component-names': 'off',
       'vue/block-lang': ['error', { script: { lang: 'ts' } }],
       'vuejs-accessibility/label-has-for': ['error', { required: { some: ['nesting', 'id'] } }],
