@@ -136,7 +136,7 @@ const degreesNamed = (text: string): string =>
 /** Units whose parts are added: "1 h 30 min", "5 ft 3 in". The parts get smaller; a last bare number is in the next smaller unit. */
 const NEXT_SMALLER: Readonly<Record<string, string>> = { d: 'h', h: 'min', min: 's', ft: 'in', m: 'cm' };
 
-function sumOfTerms(text: string, kind: QuantityKind, comma: CommaReading): Amount | null {
+function sumOfTerms(text: string, kind: QuantityKind, comma: CommaReading): Parsed {
   if (kind !== 'length' && kind !== 'time') return null;
   let rest = text;
   let total = 0;
@@ -164,7 +164,8 @@ function startOfUnit(text: string, kind: QuantityKind): Parsed {
     return start(...KINDS[kind].units.map((unit) => unit.text).slice(0, 3));
   }
   const bare = KINDS[kind].stored === undefined ? (word: string): string => word.toLowerCase() : bareWords;
-  const named = bare(degreesNamed(text));
+  // The beginning of a degree says nothing yet: "BTU/(h ft d".
+  const named = bare(degreesNamed(text.replace(/[ ·](?:°|deg?|d)$/, '')));
   const offered = KINDS[kind].units
     .filter((unit) => [unit.text, ...(unit.spellings ?? [])].some((spelling) => bare(tidy(spelling)).startsWith(named)))
     .map((unit) => unit.text);
