@@ -1,16 +1,10 @@
 /**
  * What the app asks of the place it runs in. Desktop and browser each supply one `Host`; nothing else in the app knows which.
  */
-import type { Port } from '../../solver/service/protocol';
+import type { Link } from '../../solver/service/protocol';
 
 /** A solver process or worker: a port, and notice of its end. */
-export interface SolverLink {
-  readonly port: Port;
-  /** Called once when the solver has ended by itself; returns what stops listening. */
-  onExit(handler: (reason: string) => void): () => void;
-  /** Ends it, without notice. */
-  kill(): void;
-}
+export type SolverLink = Link;
 
 /** Where a document came from or went to; `token` is opaque to the app (a path, or a file handle). */
 export interface FileRef {
@@ -37,7 +31,7 @@ export interface Host {
   /** How shortcuts are named here: Ctrl on the desktop, Alt where the browser keeps Ctrl for itself. */
   readonly viewModifier: 'Ctrl' | 'Alt';
   startSolver(): Promise<SolverLink>;
-  /** Shows the file dialog; null when the person closed it. */
+  /** Shows the file dialog; null when the person closed it. Like every opening, throws an Error that says in plain words why not. */
   openFile(): Promise<OpenedFile | null>;
   /** Reads a file dropped on the window. */
   openDropped(file: File): Promise<OpenedFile>;
@@ -53,8 +47,8 @@ export interface Host {
   /** Called when the window wants to close with unsaved edits; `answer` tells whether it may. */
   onCloseRequest(handler: () => void): () => void;
   closeNow(): void;
-  /** A file handed over at start or by a second start, or chosen in the system's menu. */
-  onOpenRequest(handler: (file: OpenedFile) => void): () => void;
+  /** A file handed over at start or by a second start, or chosen in the system's menu; `failed` hears why one could not be read. */
+  onOpenRequest(handler: (file: OpenedFile) => void, failed?: (message: string) => void): () => void;
   /** Commands chosen in the system's menu: names of the app's own command list. */
   onMenuCommand(handler: (command: string) => void): () => void;
   /** Recent files, newest first; empty where the host keeps none. */
