@@ -1,0 +1,20 @@
+/** The solver in a browser: a Web Worker whose own messages are the port. */
+import { startSolve } from '../../planning';
+import type { Port } from '../protocol';
+import { startRunner } from '../runner';
+import { channelTurns } from './turns';
+
+const scope = self as unknown as DedicatedWorkerGlobalScope;
+
+const port: Port = {
+  post: (message, transfer = []) => scope.postMessage(message, transfer),
+  listen(handler) {
+    const heard = (event: MessageEvent): void => handler(event.data);
+    scope.addEventListener('message', heard);
+    return () => scope.removeEventListener('message', heard);
+  },
+  close: () => scope.close(),
+};
+
+const now = (): number => performance.now();
+startRunner({ port, start: (project) => startSolve(project, { now }), now, later: channelTurns(), log: console.error });
