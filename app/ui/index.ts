@@ -1,0 +1,33 @@
+/** Doors of the widgets that features share, and of the words they share. */
+export { default as Banner } from './Banner.vue';
+export { default as Dialog } from './Dialog.vue';
+export { default as EditableTable } from './grid/EditableTable.vue';
+export { default as Icon, type IconName } from './Icon.vue';
+export { default as QuantityField } from './QuantityField.vue';
+export { default as Segmented } from './Segmented.vue';
+export { default as SelectField } from './SelectField.vue';
+export { default as Sign } from './Sign.vue';
+export { default as TextField } from './TextField.vue';
+export { type Cell, type Column, type Row } from './grid/cells';
+export { type QuantitySpec } from './readEntered';
+export { tintNumber, tintOf } from './tint';
+export {
+  countOf,
+  countsInWords,
+  depthInWords,
+  differenceInWords,
+  layerName,
+  limitKind,
+  limitSign,
+  marginInWords,
+  orKind,
+  placeInWords,
+  requirementInWords,
+  stageName,
+  subjectInWords,
+  temperatureInWords,
+  VERDICT_SIGNS,
+  VERDICT_WORDS,
+  whereInWords,
+  type SignKind,
+} from './words';

@@ -1,0 +1,119 @@
+/** The plan and its answers in plain words, the same wherever they are said. */
+import { formatDuration, formatQuantity, type UnitSystem } from '../../solver/model/quantities';
+import type { Answer, Counts, Place, Project, Requirement, Subject, Verdict } from '../../solver/model';
+
+/** Nothing met a name: what the thing is. */
+export const orKind = (name: string | undefined, kind: string): string => (name?.trim() ? name.trim() : kind);
+
+const nameIn = (list: readonly { id: string; name: string }[], id: string, kind: string): string =>
+  orKind(list.find((item) => item.id === id)?.name, kind);
+
+export const layerName = (project: Project, id: string): string => nameIn(project.part.layers, id, 'layer');
+export const stageName = (project: Project, id: string): string => nameIn(project.cycle.stages, id, 'stage');
+
+/** "Core", "Coldest point", "Difference within one material". */
+export function subjectInWords(of: Subject, project: Project): string {
+  if ('probe' in of) return nameIn(project.probes, of.probe, 'probe');
+  if ('point' in of) return of.point === 'coldest' ? 'Coldest point' : 'Hottest point';
+  return of.difference === 'part' ? 'Difference in the part' : 'Difference within one material';
+}
+
+/** Kind of the limit of a requirement: a difference is limited in K, everything else in °C. */
+export const limitKind = (of: Subject): 'temperature' | 'temperatureDifference' =>
+  'difference' in of ? 'temperatureDifference' : 'temperature';
+
+/** "≥", "≤" for a rule: on which side of its limit it is met. */
+export function limitSign({ must }: Requirement): '≥' | '≤' {
+  if (must.kind === 'staysBelow') return '≤';
+  if (must.kind === 'staysAbove') return '≥';
+  return must.sense === 'atLeast' ? '≥' : '≤';
+}
+
+/** "whole cycle", "in Heat", "within 2 h 00 min of the start of Heat", "at the end of Soak". */
+export function countsInWords(counts: Counts, project: Project): string {
+  switch (counts.kind) {
+    case 'cycle':
+      return 'whole cycle';
+    case 'stage':
+      return `in ${stageName(project, counts.stage)}`;
+    case 'within': {
+      const from = counts.from === undefined ? '' : ` of the start of ${stageName(project, counts.from)}`;
+      return `within ${formatDuration(counts.time)}${from}`;
+    }
+    case 'stageEnd':
+      return `at the end of ${stageName(project, counts.stage)}`;
+  }
+}
+
+/** "for 30 min, whole cycle": the rest of a requirement beside its subject and limit. */
+export function whereInWords(requirement: Requirement, project: Project): string {
+  const { must, counts } = requirement;
+  const where = countsInWords(counts, project);
+  if (must.kind === 'heldFor') return `for ${formatDuration(must.duration)}, ${where}`;
+  return must.kind === 'reaches' ? `reached, ${where}` : `always, ${where}`;
+}
+
+/** "Core ≥ 540 °C for 30 min": what a chip is headed with. The whole cycle goes without saying. */
+export function requirementInWords(requirement: Requirement, project: Project, system: UnitSystem): string {
+  const { of, must, counts } = requirement;
+  const limit = formatQuantity(must.limit, limitKind(of), system).text;
+  const held = must.kind === 'heldFor' ? ` for ${formatDuration(must.duration)}` : '';
+  const where = counts.kind === 'cycle' ? '' : ` ${countsInWords(counts, project)}`;
+  return `${subjectInWords(of, project)} ${limitSign(requirement)} ${limit}${held}${where}`;
+}
+
+/** "120 mm deep", "middle of Shell", "Hot face", "Lining side of Lining / Shell". */
+export function placeInWords(at: Place, project: Project, system: UnitSystem): string {
+  if ('depth' in at) return `${formatQuantity(at.depth, 'length', system, { significant: 4 }).text} deep`;
+  if ('face' in at) return orKind(project.part.faces[at.face].name, at.face === 'start' ? 'start face' : 'end face');
+  if ('fraction' in at) {
+    const where = at.layer === undefined ? 'the part' : layerName(project, at.layer);
+    return at.fraction === 0.5 ? `middle of ${where}` : `${Number((at.fraction * 100).toPrecision(4))} % into ${where}`;
+  }
+  const index = project.part.layers.findIndex((layer) => layer.id === at.interface);
+  const sides = { before: layerName(project, at.interface), after: orKind(project.part.layers[index + 1]?.name, 'layer') };
+  return `${sides[at.side]} side of ${sides.before} / ${sides.after}`;
+}
+
+/** How a verdict is drawn; waiting stands for all that is not yet, or cannot be, said. */
+export type SignKind = 'met' | 'thin' | 'not' | 'wait';
+
+export const VERDICT_WORDS: Record<Verdict, string> = {
+  met: 'Met',
+  thin: 'Met, thin margin',
+  'not-met': 'Not met',
+  'never-reached': 'Never reached',
+  'cannot-be-judged': 'Cannot be judged',
+};
+
+export const VERDICT_SIGNS: Record<Verdict, SignKind> = {
+  met: 'met',
+  thin: 'thin',
+  'not-met': 'not',
+  'never-reached': 'not',
+  'cannot-be-judged': 'wait',
+};
+
+/** Digits that a temperature deserves while its uncertainty is unknown: whole degrees, tenths below 10 K of margin. */
+const decimalsFor = (size: number): number => (size < 9.95 ? 1 : 0);
+
+/** "+3 h 44 min", "−26 K": positive is good. */
+export function marginInWords(answer: Answer, system: UnitSystem): string {
+  const { margin } = answer;
+  if (margin === null) return '';
+  if (answer.margin_unit === 's') return formatDuration(margin, { sign: true });
+  return formatQuantity(margin, 'temperatureDifference', system, { sign: true, decimals: decimalsFor(Math.abs(margin)) }).text;
+}
+
+/** A temperature as an answer gives it: whole degrees. */
+export const temperatureInWords = (value: number, system: UnitSystem): string =>
+  formatQuantity(value, 'temperature', system, { decimals: 0 }).text;
+
+export const differenceInWords = (value: number, system: UnitSystem): string =>
+  formatQuantity(value, 'temperatureDifference', system, { decimals: decimalsFor(Math.abs(value)) }).text;
+
+export const depthInWords = (depth: number, system: UnitSystem): string =>
+  formatQuantity(depth, 'length', system, { significant: 3 }).text;
+
+/** "5 stages", "1 layer". */
+export const countOf = (count: number, one: string, many = `${one}s`): string => `${count} ${count === 1 ? one : many}`;
