@@ -31,5 +31,9 @@ export {
   type LaidStage,
   type Line,
 } from './timing';
+export { positionOf, type Position } from './place';
+export { equalTimes, rowTimes } from './rows';
+export { buildReport, reportSchema, REPORT_FORMAT, REPORT_VERSION, CAUTION, type Report } from './report';
+export { formatDuration, formatNumber } from './quantities/write';
 export { newProject } from './defaults';
 export * from './results';

@@ -100,13 +100,13 @@ export interface Frames {
   faceFlux_W_m2: Float32Array;
 }
 
-/** A stage as it came out: its times, and the place in it that was last to close 95 % of its own change. */
+/** A stage that was begun, as it came out: its times, and the place in it that was last to close 95 % of its own change. */
 export interface StageTimes {
   stage: string;
   name: string;
   start_s: number;
   end_s: number;
-  /** null where nothing changes by 1 K or more, or where the run did not come. */
+  /** null where nothing changes by 1 K or more. */
   slowest: Slowest | null;
 }
 

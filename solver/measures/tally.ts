@@ -1,0 +1,97 @@
+/** What is kept of a scalar while it is watched against a condition: when it held, its best and its worst. */
+import { beyond, type Condition, type Course, type Stretch } from './course';
+import type { Quarters } from './quarters';
+import type { LaidWindow, Window } from './windows';
+
+/** A value, with when and where. Stage by its index; place as a depth, m, or null where there is none to tell. */
+export interface Moment {
+  readonly time: number;
+  readonly stage: number;
+  readonly value: number;
+  readonly position: number | null;
+}
+
+/** A stretch of cycle time in which the condition held without a break; over stage edges too. */
+export interface Hold {
+  readonly begin: Moment;
+  to: number;
+}
+
+/** Times closer than this part of the cycle are one. */
+export const SAME_TIME = 1e-12;
+
+export class Tally {
+  readonly condition: Condition;
+  readonly window: LaidWindow;
+  private readonly slack: number;
+  /** Holds inside what is looked at, in order. */
+  readonly holds: Hold[] = [];
+  /** Furthest on the good side of the limit, or nearest to it, and furthest on the bad side: where it counts. */
+  best: Moment | null = null;
+  worst: Moment | null = null;
+  /** Best in all that is looked at. */
+  bestEver: Moment | null = null;
+
+  /** `end`: end of the cycle, s. */
+  constructor(condition: Condition, window: LaidWindow, end: number) {
+    this.condition = condition;
+    this.window = window;
+    this.slack = SAME_TIME * end;
+  }
+
+  /** Takes a step in; `placeAt` tells the place of the scalar at a fraction of the step. */
+  observe(quarters: Quarters, course: Course, placeAt: (fraction: number) => number | null): void {
+    const { look, counts } = this.window;
+    const looked = this.clip(look, quarters);
+    if (looked === null) return;
+    const momentAt = (fraction: number, value: number): Moment => ({
+      time: quarters.time(fraction),
+      stage: quarters.step.stage,
+      value,
+      position: placeAt(fraction),
+    });
+    this.extend(course.holds(this.condition, looked), quarters, (fraction) => momentAt(fraction, course.at(fraction)));
+    const better = (than: Moment | null, value: number) => than === null || this.margin(value) > this.margin(than.value);
+    for (const { fraction, value } of course.samplesIn(looked)) {
+      if (better(this.bestEver, value)) this.bestEver = momentAt(fraction, value);
+    }
+    const counted = this.clip(counts, quarters);
+    if (counted === null) return;
+    for (const { fraction, value } of course.samplesIn(counted)) {
+      if (better(this.best, value)) this.best = momentAt(fraction, value);
+      if (this.worst === null || this.margin(value) < this.margin(this.worst.value)) this.worst = momentAt(fraction, value);
+    }
+  }
+
+  margin(value: number): number {
+    return beyond(this.condition, value);
+  }
+
+  private extend(stretches: readonly Stretch[], quarters: Quarters, momentAt: (fraction: number) => Moment): void {
+    for (const { from, to } of stretches) {
+      const last = this.holds.at(-1);
+      const begin = quarters.time(from);
+      if (last !== undefined && begin <= last.to + this.slack) last.to = quarters.time(to);
+      else this.holds.push({ begin: momentAt(from), to: quarters.time(to) });
+    }
+  }
+
+  /**
+   * The part of a step that lies in a window, in fractions; null where they share nothing. An instant belongs to the step
+   * that ends with it; a stretch shares nothing with a step that only touches it.
+   */
+  private clip({ from, to }: Window, quarters: Quarters): Stretch | null {
+    const { slack } = this;
+    const { step } = quarters;
+    if (from === to) {
+      if (step.from >= to - slack || step.to < to - slack) return null;
+      const fraction = step.to <= to + slack ? 1 : quarters.fraction(to);
+      return { from: fraction, to: fraction };
+    }
+    if (step.to <= from + slack || step.from >= to - slack) return null;
+    return {
+      from: step.from >= from - slack ? 0 : quarters.fraction(from),
+      to: step.to <= to + slack ? 1 : quarters.fraction(to),
+    };
+  }
+}

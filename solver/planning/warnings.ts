@@ -1,0 +1,121 @@
+/** What a planner should know besides the answers: things that are allowed, and most likely not meant. */
+import {
+  FACES,
+  placeOf,
+  type Answer,
+  type LaidCycle,
+  type LaidExposure,
+  type Outcome,
+  type Project,
+  type Requirement,
+  type Warning,
+} from '../model';
+
+/** Warnings that the plan itself gives, before a step is taken. */
+export function planWarnings(project: Project, cycle: LaidCycle): Warning[] {
+  return [
+    ...sameNames(project.probes, 'probes', 'probe'),
+    ...sameNames(project.requirements, 'requirements', 'requirement'),
+    ...project.requirements.flatMap((requirement, index) => [
+      ...windowWarnings(requirement, index, cycle),
+      ...reachWarnings(requirement, index, project, cycle),
+    ]),
+  ];
+}
+
+/** Warnings that follow from how the run ended. */
+export function runWarnings(outcome: Outcome, answers: readonly Answer[]): Warning[] {
+  const open = answers.filter(({ verdict }) => verdict === 'cannot-be-judged').length;
+  if (outcome.reason === 'finished' || open === 0) return [];
+  const message =
+    `The run ended at ${time(outcome.reached_s)}, before ${open} of ${answers.length} requirements could be judged; ` +
+    'those judged were decided by then.';
+  return [{ code: 'not-judged', message, place: null }];
+}
+
+function sameNames(list: readonly { name: string }[], key: string, what: string): Warning[] {
+  return list.flatMap(({ name }, index) => {
+    if (name === '' || list.findIndex((other) => other.name === name) === index) return [];
+    return [
+      { code: `${what}-name-twice`, message: `Another ${what} is named "${name}" too.`, place: placeOf([key, index, 'name']) },
+    ];
+  });
+}
+
+function windowWarnings({ name, must, counts }: Requirement, index: number, cycle: LaidCycle): Warning[] {
+  const stage = 'stage' in counts ? counts.stage : counts.kind === 'within' ? counts.from : undefined;
+  const laid = cycle.stages.find(({ id }) => id === stage);
+  const from = counts.kind === 'stageEnd' ? 0 : (laid?.start ?? 0);
+  const left = (counts.kind === 'stage' || counts.kind === 'stageEnd' ? (laid?.end ?? cycle.end) : cycle.end) - from;
+  const warnings: Warning[] = [];
+  if (counts.kind === 'within' && counts.time > left * (1 + 1e-9)) {
+    warnings.push({
+      code: 'window-beyond-cycle',
+      message: `"${name}" allows ${time(counts.time)}, but the cycle ends ${time(left)} after the time begins to count.`,
+      place: placeOf(['requirements', index, 'counts', 'time']),
+    });
+  }
+  const room = counts.kind === 'within' ? Math.min(counts.time, left) : left;
+  if (must.kind === 'heldFor' && must.duration > room * (1 + 1e-9)) {
+    warnings.push({
+      code: 'hold-longer-than-window',
+      message: `"${name}" cannot be met: ${time(must.duration)} do not fit into the ${time(room)} in which it counts.`,
+      place: placeOf(['requirements', index, 'must', 'duration']),
+    });
+  }
+  return warnings;
+}
+
+/**
+ * A limit that no point can come to. With constant properties, no sources and no imposed flux, temperatures stay between the
+ * lowest and the highest of the initial ones and those at the faces (the maximum principle of heat conduction).
+ */
+function reachWarnings({ name, of, must }: Requirement, index: number, project: Project, cycle: LaidCycle): Warning[] {
+  if ('difference' in of || must.kind === 'staysBelow' || must.kind === 'staysAbove') return [];
+  const [lowest, highest] = span(project, cycle);
+  const place = placeOf(['requirements', index, 'must', 'limit']);
+  if (must.sense === 'atLeast' && must.limit > highest) {
+    const message = `"${name}" cannot be met: nothing in the plan is hotter than ${degrees(highest)}, the limit is ${degrees(must.limit)}.`;
+    return [{ code: 'limit-out-of-reach', message, place }];
+  }
+  if (must.sense === 'atMost' && must.limit < lowest) {
+    const message = `"${name}" cannot be met: nothing in the plan is colder than ${degrees(lowest)}, the limit is ${degrees(must.limit)}.`;
+    return [{ code: 'limit-out-of-reach', message, place }];
+  }
+  return [];
+}
+
+/** Lowest and highest temperature that any point can have, °C; without bounds where a flux is imposed. */
+function span({ initial }: Project, cycle: LaidCycle): [number, number] {
+  const met = 'temperature' in initial ? [initial.temperature] : initial.layers.map(({ temperature }) => temperature);
+  for (const { exposures } of cycle.stages) for (const face of FACES) met.push(...temperaturesOf(exposures[face]));
+  return [Math.min(...met), Math.max(...met)];
+}
+
+function temperaturesOf(exposure: LaidExposure): number[] {
+  switch (exposure.kind) {
+    case 'insulated':
+      return [];
+    case 'temperature':
+      return exposure.temperature.value;
+    case 'film':
+      return exposure.surroundings.value;
+    case 'flux':
+      return [
+        ...(exposure.flux.value.some((flux) => flux > 0) ? [Infinity] : []),
+        ...(exposure.flux.value.some((flux) => flux < 0) ? [-Infinity] : []),
+      ];
+  }
+}
+
+const degrees = (value: number): string => `${Number(value.toPrecision(6))} °C`;
+
+/** "28 h 00 min", "45 min 30 s", "12.5 s". */
+function time(seconds: number): string {
+  if (seconds < 60) return `${Number(seconds.toPrecision(4))} s`;
+  const whole = Math.round(seconds);
+  const [hours, minutes, rest] = [Math.floor(whole / 3600), Math.floor((whole % 3600) / 60), whole % 60];
+  if (hours > 0 && rest === 0) return `${hours} h ${String(minutes).padStart(2, '0')} min`;
+  if (hours > 0) return `${hours} h ${String(minutes).padStart(2, '0')} min ${String(rest).padStart(2, '0')} s`;
+  return rest === 0 ? `${minutes} min` : `${minutes} min ${rest} s`;
+}

@@ -1,0 +1,43 @@
+import { describe, expect, it } from 'vitest';
+import { playField } from '../../support/madeUpRun';
+import { plan } from '../../support/plan';
+
+describe('the hottest point and the largest differences', () => {
+  it('are found inside steps and between points', () => {
+    // A hump that wanders: highest 300 °C, at depth 0.0437 m and 41.7 s.
+    const project = plan({ layers: [0.1], stages: [100] });
+    const { first } = playField(project, (x, t) => 300 - 4e4 * (x - 0.0437) ** 2 - 0.02 * (t - 41.7) ** 2, { steps: 5 });
+    expect(first.hottest?.temperature_C).toBeCloseTo(300, 8);
+    expect(first.hottest?.position_m).toBeCloseTo(0.0437, 10);
+    expect(first.hottest?.time_s).toBeCloseTo(41.7, 6);
+    expect(first.hottest?.layer).toBe('l1');
+  });
+
+  it('tell between which depths, when, and in which material', () => {
+    const project = plan({ layers: [0.5, 0.5], materials: ['a', 'b'], stages: [100] });
+    const bell = (t: number): number => 1 - ((t - 62) / 50) ** 2;
+    const { first } = playField(project, (x, t) => 20 + bell(t) * (x <= 0.5 ? 40 * (0.5 - x) : 200 * (x - 0.5)), { steps: 4 });
+    expect(first.largestDifference?.value_K).toBeCloseTo(100, 8);
+    expect(first.largestDifference?.time_s).toBeCloseTo(62, 5);
+    expect(first.largestDifference?.between).toEqual([0.5, 1]);
+    expect(first.largestDifferenceInMaterial).toMatchObject({ material: 'b', between: [0.5, 1] });
+  });
+
+  it('follow a difference that is largest where the hottest point leaps from one face to the other', () => {
+    // Start face cools, end face heats, the middle stays: the difference is smallest where they meet, at 37 s, largest at 0.
+    const project = plan({ layers: [1], stages: [100], requirements: [] });
+    const { first, field } = playField(project, (x, t) => (x < 0.5 ? 100 - t : 26 + t) * Math.abs(2 * x - 1), { steps: 3 });
+    expect(first.hottest?.temperature_C).toBeCloseTo(126, 9);
+    expect(first.hottest?.position_m).toBe(1);
+    const lowest = Math.min(...field.hottest_C);
+    expect(lowest).toBeGreaterThan(63 - 1e-9);
+    expect(lowest).toBeLessThan(63.3);
+  });
+
+  it('are null where there is no difference', () => {
+    const { first } = playField(plan({ stages: [100] }), (_, t) => 20 + t);
+    expect(first.largestDifference).toBeNull();
+    expect(first.largestDifferenceInMaterial).toBeNull();
+    expect(first.hottest).toEqual({ position_m: 0, layer: 'l1', time_s: 100, temperature_C: 120 });
+  });
+});
