@@ -24,6 +24,8 @@ export interface Progress {
 const DEBOUNCE_MS = 60;
 /** A drag never pauses: it is solved at least this often, ms. */
 const LONGEST_WAIT_MS = 120;
+/** Waiting shorter than this is not shown: answers that come at once must not flicker, ms. */
+const SHOW_WAITING_MS = 200;
 
 /** The answers as last complete, what they answer, and their frames. */
 interface Complete {
@@ -52,6 +54,19 @@ export const useRunStore = defineStore('run', () => {
   const laid = computed<LaidCycle | null>(() => (project.problems.length > 0 ? null : layCycle(project.current)));
   /** The answers are not those of the plan on screen. */
   const outdated = computed(() => solved.value !== null && solved.value !== project.current);
+
+  /** The answers have been out of date for long enough to say so. */
+  const waiting = shallowRef(false);
+  let waitingTimer: ReturnType<typeof setTimeout> | undefined;
+  watch(
+    state,
+    (now) => {
+      clearTimeout(waitingTimer);
+      if (now === 'live') waiting.value = false;
+      else if (!waiting.value) waitingTimer = setTimeout(() => (waiting.value = true), SHOW_WAITING_MS);
+    },
+    { flush: 'sync', immediate: true },
+  );
 
   let client: SolverClient | null = null;
   /** The newest job; whatever an older one still says is dropped. */
@@ -161,6 +176,7 @@ export const useRunStore = defineStore('run', () => {
     solved,
     laid,
     outdated,
+    waiting,
     state,
     progress,
     solveMs,

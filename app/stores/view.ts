@@ -1,9 +1,9 @@
 /** What the person looks at and how: playhead, units, theme, selections. Nothing here is part of the plan. */
 import { defineStore } from 'pinia';
 import { computed, ref, watch } from 'vue';
+import type { UnitSystem } from '../../solver/model/quantities';
 import { onMedia, readPreferences, writePreferences } from './preferences';
 
-export type UnitSystem = 'SI' | 'US';
 export type Theme = 'system' | 'light' | 'dark' | 'contrast';
 
 /** Tables of the sheet that can be closed to their heads. */
@@ -36,6 +36,20 @@ export const useViewStore = defineStore('view', () => {
   const profile = ref<'temperature' | 'flux'>('temperature');
   /** Tables that the person opened or closed; absent: as the window's height suggests. */
   const tables = ref<Partial<Record<TableName, boolean>>>(kept.tables ?? {});
+  const shortWindow = onMedia('(max-height: 799px)');
+  const openAtFirst: Record<TableName, boolean> = {
+    part: true,
+    materials: false,
+    probes: false,
+    exposure: true,
+    cycle: false,
+    requirements: true,
+    solver: false,
+  };
+  /** A short window closes the requirements to their summary: their verdicts stand in the strip above. */
+  const isOpen = (name: TableName): boolean =>
+    tables.value[name] ?? (openAtFirst[name] && !(name === 'requirements' && shortWindow.value));
+  const setOpen = (name: TableName, open: boolean): void => void (tables.value = { ...tables.value, [name]: open });
   /** Height of the work area and width of the sheet, px; null: as the window suggests. */
   const workHeight = ref<number | null>(kept.workHeight ?? null);
   const sheetWidth = ref<number | null>(kept.sheetWidth ?? null);
@@ -107,6 +121,8 @@ export const useViewStore = defineStore('view', () => {
     selectedRequirement,
     profile,
     tables,
+    isOpen,
+    setOpen,
     workHeight,
     sheetWidth,
     focusWish,

@@ -28,6 +28,13 @@ export {
   temperatureInWords,
   VERDICT_SIGNS,
   VERDICT_WORDS,
+  verdictNow,
   whereInWords,
   type SignKind,
+  type VerdictView,
 } from './words';
+export { default as ChartMenu } from './ChartMenu.vue';
+export { default as ChartTwin } from './ChartTwin.vue';
+export { default as DragHandle } from './DragHandle.vue';
+export { useHold, type Hold } from './useHold';
+export { useSize } from './useSize';

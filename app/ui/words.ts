@@ -94,6 +94,24 @@ export const VERDICT_SIGNS: Record<Verdict, SignKind> = {
   'cannot-be-judged': 'wait',
 };
 
+export interface VerdictView {
+  sign: SignKind;
+  word: string;
+  /** What was said before the last edit, kept in sight. */
+  old: boolean;
+}
+
+/** What to say of a requirement now: its verdict, or that it waits. */
+export function verdictNow(answer: Answer | undefined, run: { state: string; waiting: boolean }): VerdictView {
+  if (answer === undefined) {
+    const word = run.state === 'failed' ? 'Not run' : run.state === 'cancelled' ? 'Stopped' : 'Not yet';
+    return { sign: 'wait', word: run.state === 'solving' ? 'Solving' : word, old: false };
+  }
+  const verdict = { sign: VERDICT_SIGNS[answer.verdict], word: VERDICT_WORDS[answer.verdict] };
+  if (!run.waiting || run.state === 'cancelled') return { ...verdict, old: false };
+  return run.state === 'solving' ? { sign: 'wait', word: 'Solving', old: true } : { ...verdict, old: true };
+}
+
 /** Digits that a temperature deserves while its uncertainty is unknown: whole degrees, tenths below 10 K of margin. */
 const decimalsFor = (size: number): number => (size < 9.95 ? 1 : 0);
 
