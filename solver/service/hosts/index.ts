@@ -1,2 +1,2 @@
-/** Door of the hosts for commands. The worker and the process host are entries of their own, started by file. */
+/** Doors of the hosts: a solver in the same process. The worker and the process host are entries, started by file. */
 export { portPair, startInProcess } from './inProcess';

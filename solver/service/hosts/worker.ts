@@ -17,4 +17,6 @@ const port: Port = {
 };
 
 const now = (): number => performance.now();
-startRunner({ port, start: (project) => startSolve(project, { now }), now, later: channelTurns(), log: console.error });
+// eslint-disable-next-line no-console -- faults of ours are kept for those who mend them
+const log = (fault: unknown): void => console.error(fault);
+startRunner({ port, start: (project) => startSolve(project, { now }), now, later: channelTurns(), log });
