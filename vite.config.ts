@@ -24,7 +24,8 @@ export default defineConfig({
   build: {
     outDir: here('out/app'),
     emptyOutDir: true,
-    target: ['chrome130', 'firefox128', 'safari17.4'],
+    target: 'es2022',
+    minify: true,
     assetsInlineLimit: 0, // the policy allows no data: fonts
     modulePreload: { polyfill: false },
     reportCompressedSize: false,

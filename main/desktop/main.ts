@@ -17,7 +17,6 @@ const PRELOAD = join(here, '../preload/preload.cjs');
 const SOLVER = join(here, 'solver.js');
 
 app.setName('Soakwright');
-app.enableSandbox();
 registerScheme();
 if (app.requestSingleInstanceLock({ args: process.argv.slice(1) })) run();
 else app.quit();
@@ -43,7 +42,11 @@ function run(): void {
   };
   const show = (): void => {
     plan = openWindow(PRELOAD, settings('window.json'));
-    plan.window.webContents.on('did-start-loading', () => (listening = false));
+    plan.window.webContents.on('did-start-navigation', ({ isMainFrame, isSameDocument }) => {
+      if (!isMainFrame || isSameDocument) return;
+      listening = false;
+      solvers.endAll(); // those of the page that was there before
+    });
     plan.window.on('closed', () => {
       plan = null;
       listening = false;
@@ -75,7 +78,6 @@ function run(): void {
       return taken;
     },
     pageReady() {
-      solvers.endAll(); // those of a page that was there before
       listening = true;
       handOver([]);
     },

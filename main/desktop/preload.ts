@@ -51,4 +51,5 @@ const api: DesktopApi = {
 };
 
 contextBridge.exposeInMainWorld('soakwright', api);
-void ipcRenderer.invoke(CALLS.pageReady);
+// Not before: until then the other side does not yet see whose page this is.
+window.addEventListener('DOMContentLoaded', () => void ipcRenderer.invoke(CALLS.pageReady));
