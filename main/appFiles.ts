@@ -1,6 +1,6 @@
 /** Files of the built app by the addresses of a page: nothing outside its folder, no listing, no hidden names. */
-import { readFile } from 'node:fs/promises';
-import { resolve, sep } from 'node:path';
+import { readFile, realpath } from 'node:fs/promises';
+import { join, sep } from 'node:path';
 
 export interface AppFile {
   /** Relative to the built app, with forward slashes. */
@@ -12,12 +12,12 @@ export interface AppFile {
 export async function readAppFile(folder: string, pathname: string): Promise<AppFile | null> {
   const path = pathInside(pathname);
   if (path === null) return null;
-  const file = resolve(folder, path);
-  if (!file.startsWith(resolve(folder) + sep)) return null;
-  return await readFile(file).then(
-    (bytes) => ({ path, bytes }),
-    () => null,
-  );
+  try {
+    const [within, file] = await Promise.all([realpath(folder), realpath(join(folder, path))]);
+    return file.startsWith(within + sep) ? { path, bytes: await readFile(file) } : null;
+  } catch {
+    return null; // not there, or a folder
+  }
 }
 
 function pathInside(pathname: string): string | null {
