@@ -3,6 +3,7 @@
  *
  * The module that the test driver asks for is loaded first. Waiting for the app here holds back the runtime's own readiness.
  */
+// eslint-disable-next-line house/rooms -- this is the runtime's own side
 import { app } from 'electron';
 import { readFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
