@@ -10,13 +10,13 @@
  * and 0.6 of that at layer edges and insulated faces, where the storage weights are one-sided and less exact. Nodes are placed
  * at equal fractions of the integral of 1/spacing. The constants were fitted so that the error stays below the accuracy.
  */
-import { FACES, type LaidCycle } from '../model';
-import { sharpnessOf, type Sharpness, type TemperatureRange } from './sharpness';
-import type { WallGrid } from './wallGrid';
+import type { LaidCycle } from '../model';
+import type { Sharpness, TemperatureRange } from './sharpness';
+import type { PlainRows, WallGrid } from './wallGrid';
 import type { WallLayer } from './wallLayers';
 
 /** Growth b never exceeds this: neighbours then differ by less than 1.61, and the storage weights stay positive. */
-const LARGEST_GROWTH = 0.45;
+const LARGEST_GROWTH = 0.3;
 const EDGE_PART = 0.6;
 const FEWEST_ELEMENTS = 3;
 /** The first spacing at a sharp place need not resolve what is over after this part of the cycle, or of its shortest stage. */
@@ -24,6 +24,20 @@ const SHORTEST_OF_CYCLE = 1e-4;
 const SHORTEST_OF_STAGE = 1e-2;
 /** No spacing is below this part of the whole; it keeps absurd plans from asking for endless grids. */
 const SMALLEST_SPACING = 1e-9;
+/** A first element this many times longer than a jump asks for gets plain storage, in so many rows. */
+const UNRESOLVED = 4;
+const PLAIN_ROWS = 3;
+
+/** What the grid of a wall follows from. */
+export interface GridDemand {
+  readonly layers: readonly WallLayer[];
+  readonly cycle: LaidCycle;
+  /** K */
+  readonly accuracy: number;
+  readonly range: TemperatureRange;
+  /** How sharply the cycle acts on either face; null: insulated throughout. */
+  readonly sharpness: { readonly start: Sharpness | null; readonly end: Sharpness | null };
+}
 
 /** A place where the profile is sharp: its position and first spacing, √s. */
 interface SharpPlace {
@@ -31,21 +45,17 @@ interface SharpPlace {
   first: number;
 }
 
-/** The graded grid for an accuracy in K. */
-export function automaticGrid(
-  layers: readonly WallLayer[],
-  cycle: LaidCycle,
-  accuracy: number,
-  range: TemperatureRange,
-): WallGrid {
+/** Lengths of the elements of every layer in the graded grid, m. */
+export function gradedLengths(demand: GridDemand): Float64Array[] {
+  const { layers, accuracy, range, sharpness } = demand;
   const growth = spacingGrowth(accuracy, range, 4);
   const edges = layerEdges(layers);
-  const { places, exposed } = sharpPlaces(layers, edges, cycle, accuracy, range, growth);
+  const places = sharpPlaces(demand, edges, growth);
   const whole = edges[layers.length];
-  const elements = layers.map((layer, index) => {
+  return layers.map((layer, index) => {
     const [left, right] = [edges[index], edges[index + 1]];
-    const leftIsEdge = index > 0 || !exposed.start;
-    const rightIsEdge = index < layers.length - 1 || !exposed.end;
+    const leftIsEdge = index > 0 || sharpness.start === null;
+    const rightIsEdge = index < layers.length - 1 || sharpness.end === null;
     const spacing = (sigma: number): number => {
       let wanted = growth * whole;
       for (const place of places) wanted = Math.min(wanted, place.first + growth * Math.abs(sigma - place.at));
@@ -55,11 +65,10 @@ export function automaticGrid(
     };
     return placeElements(layer.thickness, left, right, spacing);
   });
-  return { kind: 'nodes', thickness: layers.map((layer) => layer.thickness), elements };
 }
 
 /** Elements per layer for equal spacing at second order, where no sharp place is resolved: for the schemes of the textbooks. */
-export function equalCounts(layers: readonly WallLayer[], accuracy: number, range: TemperatureRange): number[] {
+export function equalCounts({ layers, accuracy, range }: GridDemand): number[] {
   const growth = spacingGrowth(accuracy, range, 2);
   const edges = layerEdges(layers);
   const whole = edges[layers.length];
@@ -69,6 +78,35 @@ export function equalCounts(layers: readonly WallLayer[], accuracy: number, rang
     return Math.min(most, Math.max(FEWEST_ELEMENTS, Math.ceil(wanted)));
   });
 }
+
+/**
+ * Where storage of fourth order would do harm: it answers a jump that is finer than the first element with a swing of a tenth
+ * of it to the other side, at the next node and for as long as the jump stays that fine. Plain rows do not. They are few and
+ * next to the jump, so the order in space is kept.
+ */
+export function plainRowsOf(demand: GridDemand, lengths: readonly Float64Array[]): PlainRows[] {
+  const { layers, accuracy, sharpness } = demand;
+  const plain = layers.map(() => ({ start: 0, end: 0 }));
+  const last = layers.length - 1;
+  const unresolved = (face: 'start' | 'end', index: number, length: number): boolean => {
+    const sharp = sharpness[face];
+    return (
+      sharp !== null && length / Math.sqrt(diffusivity(layers[index])) > UNRESOLVED * jumpSpacing(layers[index], sharp, accuracy)
+    );
+  };
+  if (unresolved('start', 0, lengths[0][0])) plain[0].start = PLAIN_ROWS;
+  if (unresolved('end', last, lengths[last][lengths[last].length - 1])) plain[last].end = PLAIN_ROWS;
+  for (let i = 1; i < layers.length; i++) {
+    if (!meetUnequal(layers, i, accuracy)) continue;
+    plain[i - 1].end = PLAIN_ROWS;
+    plain[i].start = PLAIN_ROWS;
+  }
+  return plain;
+}
+
+/** Whether layer i and the one before start at different temperatures, and so act on each other like a jump. */
+const meetUnequal = (layers: readonly WallLayer[], i: number, accuracy: number): boolean =>
+  Math.abs(layers[i].initial - layers[i - 1].initial) > accuracy;
 
 function spacingGrowth(accuracy: number, range: TemperatureRange, order: 2 | 4): number {
   const epsilon = (0.5 * accuracy) / Math.max(range.highest - range.lowest, accuracy);
@@ -84,42 +122,40 @@ function layerEdges(layers: readonly WallLayer[]): number[] {
   return edges;
 }
 
-function sharpPlaces(
-  layers: readonly WallLayer[],
-  edges: readonly number[],
-  cycle: LaidCycle,
-  accuracy: number,
-  range: TemperatureRange,
-  growth: number,
-): { places: SharpPlace[]; exposed: Record<'start' | 'end', boolean> } {
+function sharpPlaces({ layers, cycle, accuracy, sharpness }: GridDemand, edges: readonly number[], growth: number): SharpPlace[] {
   const shortestStage = Math.min(...cycle.stages.map((stage) => stage.end - stage.start));
   const smallest = 0.5 * growth * Math.sqrt(Math.min(SHORTEST_OF_CYCLE * cycle.end, SHORTEST_OF_STAGE * shortestStage));
   const places: SharpPlace[] = [];
-  const exposed = { start: false, end: false };
-  for (const face of FACES) {
-    const layer = face === 'start' ? layers[0] : layers[layers.length - 1];
-    const wanted = firstSpacing(layer, sharpnessOf(cycle, face, layer.initial, range), accuracy);
-    exposed[face] = cycle.stages.some((stage) => stage.exposures[face].kind !== 'insulated');
-    if (exposed[face]) places.push({ at: face === 'start' ? 0 : edges[layers.length], first: Math.max(wanted, smallest) });
-  }
-  // Layers that meet at different temperatures act on each other like a jump.
+  const addFace = (sharp: Sharpness | null, layer: WallLayer, at: number): void => {
+    if (sharp === null) return;
+    const first = Math.min(jumpSpacing(layer, sharp, accuracy), rampSpacing(layer, sharp, accuracy));
+    places.push({ at, first: Math.max(first, smallest) });
+  };
+  addFace(sharpness.start, layers[0], 0);
+  addFace(sharpness.end, layers[layers.length - 1], edges[layers.length]);
   for (let i = 1; i < layers.length; i++) {
-    const difference = Math.abs(layers[i].initial - layers[i - 1].initial);
-    if (difference > accuracy) places.push({ at: edges[i], first: smallest });
+    if (meetUnequal(layers, i, accuracy)) places.push({ at: edges[i], first: smallest });
   }
-  return { places, exposed };
+  return places;
 }
 
-/** First spacing at a face, √s: what keeps the error of the first moments after a jump, or at the start of a ramp, small. */
-function firstSpacing(layer: WallLayer, sharpness: Sharpness, accuracy: number): number {
-  if (sharpness.temperatureJump) return 0;
-  const k = layer.curves.conductivity(layer.initial);
+/** Part of the accuracy that the first moments after a jump, or at the start of a ramp, may cost. */
+const FIRST_PART = 0.75;
+
+/** First spacing at a face that resolves its jumps, √s; 0 where the temperature itself jumps, Infinity where nothing does. */
+function jumpSpacing(layer: WallLayer, { temperatureJump, fluxJump }: Sharpness, accuracy: number): number {
+  if (temperatureJump) return 0;
+  if (fluxJump === 0) return Infinity;
+  return (FIRST_PART * accuracy * layer.curves.conductivity(layer.initial)) / fluxJump / Math.sqrt(diffusivity(layer));
+}
+
+/** First spacing at a face that resolves its ramps, √s. */
+function rampSpacing(layer: WallLayer, { fluxRate, temperatureRate }: Sharpness, accuracy: number): number {
   const alpha = diffusivity(layer);
-  const part = 0.75 * accuracy;
+  const part = FIRST_PART * accuracy * alpha;
   let first = Infinity;
-  if (sharpness.fluxJump > 0) first = Math.min(first, (part * k) / sharpness.fluxJump);
-  if (sharpness.fluxRate > 0) first = Math.min(first, Math.cbrt((part * k * alpha) / sharpness.fluxRate));
-  if (sharpness.temperatureRate > 0) first = Math.min(first, Math.sqrt((part * alpha) / sharpness.temperatureRate));
+  if (fluxRate > 0) first = Math.min(first, Math.cbrt((part * layer.curves.conductivity(layer.initial)) / fluxRate));
+  if (temperatureRate > 0) first = Math.min(first, Math.sqrt(part / temperatureRate));
   return first / Math.sqrt(alpha);
 }
 
@@ -150,4 +186,10 @@ function placeElements(thickness: number, left: number, right: number, spacing: 
     from = to;
   }
   return lengths;
+}
+
+/** The grid of the automatic scheme: graded, or of the lengths given; plain where it must be. */
+export function automaticGrid(demand: GridDemand, lengths: readonly Float64Array[] = gradedLengths(demand)): WallGrid {
+  const thickness = demand.layers.map((layer) => layer.thickness);
+  return { kind: 'nodes', thickness, elements: lengths, plainRows: plainRowsOf(demand, lengths) };
 }

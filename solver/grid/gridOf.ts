@@ -1,6 +1,6 @@
-import type { LaidCycle, Settings } from '../model';
-import { automaticGrid, equalCounts } from './automaticGrid';
-import type { TemperatureRange } from './sharpness';
+import type { FaceId, LaidCycle, Settings } from '../model';
+import { automaticGrid, equalCounts, type GridDemand } from './automaticGrid';
+import { sharpnessOf, type Sharpness, type TemperatureRange } from './sharpness';
 import { equalGrid, type WallGrid } from './wallGrid';
 import type { WallLayer } from './wallLayers';
 
@@ -15,16 +15,19 @@ export function gridOf(
   range: TemperatureRange,
 ): WallGrid {
   const { scheme, accuracy, grid } = settings;
+  const sharpness = { start: sharpnessAt('start', layers[0]), end: sharpnessAt('end', layers[layers.length - 1]) };
+  const demand: GridDemand = { layers, cycle, accuracy, range, sharpness };
+  if (grid === 'automatic' && scheme === 'automatic') return automaticGrid(demand);
   const thickness = layers.map((layer) => layer.thickness);
-  if (grid === 'automatic') {
-    if (scheme === 'automatic') return automaticGrid(layers, cycle, accuracy, range);
-    return equalGrid('nodes', thickness, equalCounts(layers, accuracy, range));
-  }
+  if (grid === 'automatic') return equalGrid('nodes', thickness, equalCounts(demand));
   const perLayer = (counts: number | number[]) => layers.map((_, i) => (typeof counts === 'number' ? counts : counts[i]));
   if ('cells' in grid) return equalGrid('cells', thickness, perLayer(grid.cells));
-  return equalGrid(
-    'nodes',
-    thickness,
-    perLayer(grid.nodes).map((nodes) => nodes - 1),
-  );
+  const elements = perLayer(grid.nodes).map((nodes) => nodes - 1);
+  const equal = equalGrid('nodes', thickness, elements);
+  return scheme === 'automatic' ? automaticGrid(demand, equal.elements) : equal;
+
+  function sharpnessAt(face: FaceId, layer: WallLayer): Sharpness | null {
+    if (cycle.stages.every((stage) => stage.exposures[face].kind === 'insulated')) return null;
+    return sharpnessOf(cycle, face, layer.initial, range);
+  }
 }

@@ -3,5 +3,5 @@ export { gridOf } from './gridOf';
 export { fieldPoints, type FieldPoints } from './points';
 export { temperatureRange, type TemperatureRange } from './sharpness';
 export { layerAt, stencilAt, type Stencil } from './stencil';
-export { equalGrid, type WallGrid } from './wallGrid';
+export { equalGrid, type PlainRows, type WallGrid } from './wallGrid';
 export { wallLayers, type WallLayer } from './wallLayers';

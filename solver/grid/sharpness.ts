@@ -140,6 +140,7 @@ function riseByFlux(layers: readonly WallLayer[], cycle: LaidCycle): { heating: 
       const effusivity = Math.sqrt(curves.conductivity(initial) * curves.heatCapacity(initial));
       for (const way of ['heating', 'cooling'] as const) {
         const flux = Math.max(0, ...exposure.flux.value.map((value) => (way === 'heating' ? value : -value)));
+        if (flux === 0) continue;
         rise[way] += Math.min((flux * duration) / capacity, flux * (resistance + other));
         // A half space under constant flux; or the whole part in its steady state.
         const half = (2 * flux * Math.sqrt(duration / Math.PI)) / effusivity;

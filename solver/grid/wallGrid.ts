@@ -8,6 +8,14 @@ export interface WallGrid {
   readonly elements: readonly Float64Array[];
   /** Thickness of every layer, m. */
   readonly thickness: readonly number[];
+  /** Rows next to either edge of every layer whose storage is to be plain, because a jump there is finer than the grid. */
+  readonly plainRows?: readonly PlainRows[];
+}
+
+/** Number of rows counted from a layer's edge towards the start face, and from that towards the end face. */
+export interface PlainRows {
+  start: number;
+  end: number;
 }
 
 /** The same number of equal elements over the whole of each layer. */

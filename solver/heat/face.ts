@@ -5,13 +5,10 @@
  *
  * T is the temperature of the face's unknown, Ts that of the surroundings, h the film coefficient, R [m²·K/W] the conduction
  * between the face and its unknown: 0 where the unknown is the face itself, half a cell's with cells. A face held at a
- * temperature is the same with G given; or its unknown is imposed, and q unknown.
+ * temperature is h without bound: G = 1/R; where R is 0 its unknown is held, and q is whatever the balance asks for.
  */
 import { lineAt, type LaidExposure, type Line } from '../model';
 import type { Interval } from './system';
-
-/** How a face with a held temperature acts: by a given conductance, W/(m²·K), or by imposing its unknown. */
-export type HeldFace = { readonly conductance: number } | 'imposed';
 
 /** value + slope × (time since the interval began) */
 interface Straight {
@@ -29,7 +26,6 @@ function straightPart(line: Line, { from, to }: Interval): Straight {
 
 export class Face {
   private readonly resistance: number;
-  private readonly held: HeldFace;
   private from = 0;
   private imposed = NOTHING;
   private coefficient = NOTHING;
@@ -41,9 +37,8 @@ export class Face {
   fluxSlope = 0;
 
   /** `resistance` between face and unknown, m²·K/W. */
-  constructor(resistance: number, held: HeldFace) {
+  constructor(resistance: number) {
     this.resistance = resistance;
-    this.held = held;
   }
 
   enter(exposure: LaidExposure, interval: Interval): void {
@@ -59,14 +54,14 @@ export class Face {
           : NOTHING;
   }
 
-  /** Whether the face's unknown is imposed in this interval. */
-  get imposes(): boolean {
-    return this.kind === 'temperature' && this.held === 'imposed';
+  /** Whether the face's unknown is held in this interval. */
+  get holds(): boolean {
+    return this.kind === 'temperature' && this.resistance === 0;
   }
 
-  /** Whether ∂q/∂T changes with time in this interval. */
-  get steepens(): boolean {
-    return this.coefficient.slope !== 0;
+  /** Rate of change of the surroundings' temperature, or of the held one, K/s. */
+  get surroundingsRate(): number {
+    return this.surroundings.slope;
   }
 
   /** Temperature of the surroundings, or the held one, °C. */
@@ -74,7 +69,7 @@ export class Face {
     return this.surroundings.value + this.surroundings.slope * (time - this.from);
   }
 
-  /** Evaluates the exchange with an unknown at `temperature`; nothing flows by this law where the unknown is imposed. */
+  /** Evaluates the exchange with an unknown at `temperature`; nothing flows by this law where the unknown is held. */
   at(temperature: number, time: number): void {
     const since = time - this.from;
     let conductance = 0;
@@ -84,8 +79,8 @@ export class Face {
       const series = 1 / (1 + h * this.resistance);
       conductance = h * series;
       conductanceSlope = this.coefficient.slope * series * series;
-    } else if (this.kind === 'temperature' && this.held !== 'imposed') {
-      conductance = this.held.conductance;
+    } else if (this.kind === 'temperature' && !this.holds) {
+      conductance = 1 / this.resistance;
     }
     const difference = this.surroundings.value + this.surroundings.slope * since - temperature;
     this.flux = this.imposed.value + this.imposed.slope * since + conductance * difference;
@@ -98,10 +93,5 @@ export class Face {
     if (this.resistance === 0) return temperature;
     this.at(temperature, time);
     return temperature + this.flux * this.resistance;
-  }
-
-  /** Whether the flux follows from temperatures well enough to be read off them: not through the film that stands for a held face. */
-  get lawful(): boolean {
-    return this.kind !== 'temperature' || this.resistance > 0;
   }
 }

@@ -1,4 +1,5 @@
 /** Doors of heat: the balances of a part, as schemes see them. */
 export type { HeatSystem, Interval } from './system';
 export { wallVolumes, type Volumes } from './volumes';
-export { WallSystem, type WallOptions } from './wall';
+export type { StorageKind } from './weights';
+export { WallSystem } from './wall';

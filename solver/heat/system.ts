@@ -13,8 +13,9 @@
  * 2. `evaluate` and `linearise` leave S, F and their derivatives at (u, time) in the arrays named here, which are used again.
  * 3. Inside an interval every schedule is straight, and its value at the ends is taken from inside.
  * 4. `solve` is direct and accurate to rounding.
- * 5. Rows whose temperature is imposed are eliminated: their unit rows in `factorise`, the change in `imposedChanges`, the
- *    heat that holds them in `impose`. Only the schemes of the textbooks meet such rows.
+ * 5. A row whose temperature is held has no balance of its own: its F is zero, because the heat that holds it answers whatever
+ *    flows, and what its unknown does is known beforehand. Its row in `factorise` is a unit row, its change stands in
+ *    `heldChanges`, and `hold` books what its own storage took. All other duties hold for it as they stand.
  */
 
 /** A stretch of cycle time with no stage edge, jump or kink strictly inside, s. */
@@ -45,8 +46,11 @@ export interface HeatSystem {
 
   /** Unknowns at the start, before any exposure acts. */
   initial(): Float64Array;
-  /** Takes up the exposures of an interval; all calls after it speak of times inside. */
-  enter(interval: Interval): void;
+  /**
+   * Takes up the exposures of an interval; all calls after it speak of times inside. Where a held temperature jumps, the
+   * unknown jumps at once, and the heat that takes came through its heat.
+   */
+  enter(interval: Interval, u: Float64Array, stored: Float64Array, through: Float64Array): void;
   evaluate(u: Float64Array, time: number): void;
   linearise(u: Float64Array, time: number): void;
 
@@ -59,10 +63,15 @@ export interface HeatSystem {
   /** ∂q/∂u × x of one tracked heat. */
   rateTimes(heat: number, x: Float64Array): number;
 
-  /** Writes the change of every imposed unknown up to `time` into its row of a right-hand side. */
-  imposedChanges(u: Float64Array, time: number, rightHandSide: Float64Array): void;
-  /** Sets imposed unknowns to their value at `time`; what their rows then hold more than `stored` came through their heats. */
-  impose(u: Float64Array, time: number, stored: Float64Array, through: Float64Array): void;
+  /** Rows that are held in this interval. */
+  readonly heldRows: readonly number[];
+  /**
+   * Writes the change of every held unknown into its row of a right-hand side: to its temperature at `time`, and for
+   * `ahead` (s) further at the rate at which that changes.
+   */
+  heldChanges(u: Float64Array, time: number, ahead: number, rightHandSide: Float64Array): void;
+  /** Sets held unknowns to their value at `time`; what their rows then store more than `stored` came through their heats. */
+  hold(u: Float64Array, time: number, stored: Float64Array, through: Float64Array): void;
 
   /** Largest change of temperature, K, that a change x of the unknowns means, and its row. The object is used again. */
   largestChange(x: ArrayLike<number>): { kelvin: number; row: number };

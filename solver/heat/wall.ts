@@ -15,15 +15,6 @@ import type { HeatSystem, Interval } from './system';
 import { initialTemperatures, wallRows, type WallRows } from './wallRows';
 import type { StorageKind } from './weights';
 
-export interface WallOptions {
-  readonly storage: StorageKind;
-  /** With nodes, how a held face temperature acts: imposed on its node, or through a film so strong that it makes no difference. */
-  readonly heldFaces: 'imposed' | 'film';
-}
-
-/** The film that stands for a held temperature conducts this many times better than the first element. */
-const HELD_FILM = 1e6;
-
 export class WallSystem implements HeatSystem {
   readonly size: number;
   readonly heats = 2;
@@ -37,6 +28,7 @@ export class WallSystem implements HeatSystem {
   readonly rateSlopes = new Float64Array(2);
   readonly rowCapacity: Float64Array;
   factorisations = 0;
+  heldRows: readonly number[] = [];
 
   private readonly rows: WallRows;
   private readonly cycle: LaidCycle;
@@ -59,15 +51,15 @@ export class WallSystem implements HeatSystem {
   private factored: { a: number; b: number } | null = null;
   private readonly largest = { kelvin: 0, row: 0 };
 
-  constructor(layers: readonly WallLayer[], grid: WallGrid, cycle: LaidCycle, options: WallOptions) {
-    const rows = wallRows(layers, grid, options.storage);
+  constructor(layers: readonly WallLayer[], grid: WallGrid, cycle: LaidCycle, storage: StorageKind) {
+    const rows = wallRows(layers, grid, storage);
     this.rows = rows;
     this.cycle = cycle;
     this.cells = grid.kind === 'cells';
     this.size = rows.size;
     this.linear = layers.every((layer) => layer.curves.constant);
     this.faceRow = [0, rows.size - 1];
-    this.faces = [this.makeFace('start', options), this.makeFace('end', options)];
+    this.faces = [new Face(rows.faceResistance.start), new Face(rows.faceResistance.end)];
     const points = fieldPoints(grid);
     this.points = points.position.length;
     this.pointUnknown = this.unknownsOfPoints(points.layerStart);
@@ -85,15 +77,6 @@ export class WallSystem implements HeatSystem {
     this.shifted = new BandMatrix(rows.size);
   }
 
-  private makeFace(face: 'start' | 'end', options: WallOptions): Face {
-    const { layers, faceResistance } = this.rows;
-    if (this.cells) return new Face(faceResistance[face], { conductance: 1 / faceResistance[face] });
-    if (options.heldFaces === 'imposed') return new Face(0, 'imposed');
-    const { layer, inverseDistance } = layers[face === 'start' ? 0 : layers.length - 1];
-    const first = inverseDistance[face === 'start' ? 0 : inverseDistance.length - 1];
-    return new Face(0, { conductance: HELD_FILM * layer.curves.conductivity(layer.initial) * first });
-  }
-
   /** With nodes every point is one; with cells the first and last point of a layer are its edges. */
   private unknownsOfPoints(layerStart: Int32Array): Int32Array {
     const unknown = new Int32Array(this.points).fill(-1);
@@ -108,10 +91,33 @@ export class WallSystem implements HeatSystem {
     return initialTemperatures(this.rows);
   }
 
-  enter(interval: Interval): void {
+  enter(interval: Interval, u: Float64Array, stored: Float64Array, through: Float64Array): void {
     const { exposures } = this.cycle.stages[interval.stage];
     FACES.forEach((face, i) => this.faces[i].enter(exposures[face], interval));
+    this.heldRows = this.faceRow.filter((_, i) => this.faces[i].holds);
     this.factored = null;
+    for (let i = 0; i < 2; i++) {
+      if (!this.faces[i].holds) continue;
+      const row = this.faceRow[i];
+      const before = this.storageAtFace(i, u);
+      u[row] = this.faces[i].surroundingsAt(interval.from);
+      const taken = this.storageAtFace(i, u) - before;
+      stored[row] += taken;
+      through[i] += taken;
+    }
+  }
+
+  /** S of the row of a face's node. */
+  private storageAtFace(face: number, u: Float64Array): number {
+    const { layer, node, weights, count } = this.rows.layers[face === 0 ? 0 : this.rows.layers.length - 1];
+    const heat = (i: number): number => layer.curves.heatContent(u[node + i]);
+    const last = count - 1;
+    if (face === 0) {
+      const far = weights.far[0] === 0 ? 0 : weights.far[0] * heat(2);
+      return weights.here[0] * heat(0) + weights.after[0] * heat(1) + far;
+    }
+    const far = weights.far[last] === 0 ? 0 : weights.far[last] * heat(last - 2);
+    return weights.here[last] * heat(last) + weights.before[last] * heat(last - 1) + far;
   }
 
   evaluate(u: Float64Array, time: number): void {
@@ -126,9 +132,11 @@ export class WallSystem implements HeatSystem {
     }
     for (let i = 0; i < 2; i++) {
       const row = this.faceRow[i];
-      this.faces[i].at(u[row], time);
-      this.rates[i] = this.faces[i].flux;
-      inflow[row] += this.faces[i].flux;
+      const face = this.faces[i];
+      face.at(u[row], time);
+      // A held node takes no heat from its balance: what conduction brings leaves through the face.
+      this.rates[i] = face.holds ? -inflow[row] : face.flux;
+      inflow[row] += this.rates[i];
     }
   }
 
@@ -237,7 +245,7 @@ export class WallSystem implements HeatSystem {
     for (let i = 0; i < 2; i++) {
       const row = this.faceRow[i];
       shifted.diagonal[row] -= b * this.perKelvin[i];
-      if (!this.faces[i].imposes) continue;
+      if (!this.faces[i].holds) continue;
       shifted.lower[row] = shifted.upper[row] = shifted.farLower[row] = shifted.farUpper[row] = 0;
       shifted.diagonal[row] = 1;
     }
@@ -255,24 +263,27 @@ export class WallSystem implements HeatSystem {
   }
 
   rateTimes(heat: number, x: Float64Array): number {
-    return this.perKelvin[heat] * x[this.faceRow[heat]];
+    const row = this.faceRow[heat];
+    if (!this.faces[heat].holds) return this.perKelvin[heat] * x[row];
+    const left = row > 0 ? this.toLeft[row] * x[row - 1] : 0;
+    const right = row < this.size - 1 ? this.toRight[row] * x[row + 1] : 0;
+    return -(left + this.atNode[row] * x[row] + right);
   }
 
-  imposedChanges(u: Float64Array, time: number, rightHandSide: Float64Array): void {
+  heldChanges(u: Float64Array, time: number, ahead: number, rightHandSide: Float64Array): void {
     for (let i = 0; i < 2; i++) {
+      const face = this.faces[i];
       const row = this.faceRow[i];
-      if (this.faces[i].imposes) rightHandSide[row] = this.faces[i].surroundingsAt(time) - u[row];
+      if (face.holds) rightHandSide[row] = face.surroundingsAt(time) - u[row] + ahead * face.surroundingsRate;
     }
   }
 
-  impose(u: Float64Array, time: number, stored: Float64Array, through: Float64Array): void {
-    const { layers } = this.rows;
+  hold(u: Float64Array, time: number, stored: Float64Array, through: Float64Array): void {
     for (let i = 0; i < 2; i++) {
-      if (!this.faces[i].imposes) continue;
+      if (!this.faces[i].holds) continue;
       const row = this.faceRow[i];
-      const { layer, weights, count } = layers[i === 0 ? 0 : layers.length - 1];
       u[row] = this.faces[i].surroundingsAt(time);
-      const holds = weights.here[i === 0 ? 0 : count - 1] * layer.curves.heatContent(u[row]);
+      const holds = this.storageAtFace(i, u);
       through[i] += holds - stored[row];
       stored[row] = holds;
     }
@@ -312,7 +323,7 @@ export class WallSystem implements HeatSystem {
 
   rateAt(heat: number, u: (row: number) => number, time: number): number | null {
     const face = this.faces[heat];
-    if (!face.lawful) return null;
+    if (face.holds) return null;
     face.at(u(this.faceRow[heat]), time);
     return face.flux;
   }

@@ -57,7 +57,7 @@ export function wallRows(layers: readonly WallLayer[], grid: WallGrid, storage: 
       first: slot,
       count,
       node,
-      weights: cells ? cellWeights(lengths) : nodeWeights(lengths, storage),
+      weights: cells ? cellWeights(lengths) : nodeWeights(lengths, storage, grid.plainRows?.[index]),
       inverseDistance: Float64Array.from({ length: count - 1 }, (_, i) =>
         cells ? 2 / (lengths[i] + lengths[i + 1]) : 1 / lengths[i],
       ),

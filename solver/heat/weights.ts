@@ -10,6 +10,8 @@
  * At a layer's ends half a hat is left; fourth order takes the parabola through the node and the next two of its layer.
  */
 
+import type { PlainRows } from '../grid';
+
 export type StorageKind = 'plain' | 'fourthOrder';
 
 /** Weights of the nodes of one layer, m; `far` is the weight of the second neighbour, inwards, and non-zero at the ends only. */
@@ -20,23 +22,31 @@ export interface StorageWeights {
   readonly far: Float64Array;
 }
 
-/** Weights of a layer with a node at both ends of all its elements; lengths in m. */
-export function nodeWeights(lengths: Float64Array, kind: StorageKind): StorageWeights {
+/**
+ * Weights of a layer with a node at both ends of all its elements; lengths in m. So many rows as `plainRows` says at either end
+ * are plain whatever the kind.
+ */
+export function nodeWeights(
+  lengths: Float64Array,
+  kind: StorageKind,
+  plainRows: PlainRows = { start: 0, end: 0 },
+): StorageWeights {
   const nodes = lengths.length + 1;
   const weights = emptyWeights(nodes);
   const { before, here, after } = weights;
+  const kindOf = (i: number): StorageKind => (i < plainRows.start || i >= nodes - plainRows.end ? 'plain' : kind);
   // First row, interior, last row.
-  endRow(weights, 0, 1, lengths[0], lengths[1], kind);
+  endRow(weights, 0, 1, lengths[0], lengths[1], kindOf(0));
   for (let i = 1; i < nodes - 1; i++) {
     const a = lengths[i - 1];
     const b = lengths[i];
-    if (kind === 'fourthOrder') {
+    if (kindOf(i) === 'fourthOrder') {
       before[i] = (a * a * a + 2 * a * a * b - b * b * b) / (12 * a * (a + b));
       after[i] = (b * b * b + 2 * b * b * a - a * a * a) / (12 * b * (a + b));
     }
     here[i] = (a + b) / 2 - before[i] - after[i];
   }
-  endRow(weights, nodes - 1, -1, lengths[nodes - 2], lengths[nodes - 3], kind);
+  endRow(weights, nodes - 1, -1, lengths[nodes - 2], lengths[nodes - 3], kindOf(nodes - 1));
   return weights;
 }
 

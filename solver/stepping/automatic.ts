@@ -13,6 +13,7 @@
  *   W[i] = γ ( h (q + ∂q/∂u U[i]) + Σ c[i][j] W[j] + d[i] h² ∂q/∂t )
  *
  * so that the sum of E changes by the sum of Q to rounding at any tolerance. No iteration: one factorisation and eight solves.
+ * A held unknown is the limit of an ever stronger film: U[i] = held(t[i]) − u[i] + d[i] h held', V[i] = 0; no order is lost.
  *
  * h [s] step, E [J] carried heat, S heat stored, F [W] heat flowing in, u unknowns; coefficients in rodas5pCoefficients.ts. Order 5
  * in time, L-stable. Sources: G. Steinebach, BIT Numerical Mathematics 63 (2023); Hairer & Wanner, Solving ODEs II, IV.7 and VI.4.
@@ -30,9 +31,9 @@ const EMBEDDED_ORDER = 4;
 const LOCAL_PART = 0.3;
 /** After a jump, the row that it hits hardest may move by this many local errors in the first step. */
 const FIRST_STEP_ERRORS = 50;
-/** The first step is never below this part of the cycle, nor any other below the second one. */
-const SMALLEST_FIRST_STEP = 1e-9;
-const SMALLEST_STEP = 1e-12;
+/** The first step is never below this part of the cycle, nor any other below the second: time must still move. */
+const SMALLEST_FIRST_STEP = 1e-12;
+const SMALLEST_STEP = 1e-14;
 
 export class Automatic implements Scheme {
   readonly method = 'RODAS5P, order 5(4)';
@@ -56,9 +57,10 @@ export class Automatic implements Scheme {
   private readonly dense: Float64Array;
   private denseKnown = false;
   private length = 0;
-  /** F and ∂F/∂t at the end of the last interval, under its exposures. */
+  /** F, ∂F/∂t and the rates of held unknowns at the end of the last interval, under its exposures. */
   private readonly inflowBefore: Float64Array;
   private readonly slopeBefore: Float64Array;
+  private readonly heldRateBefore: Float64Array;
   private linearised = false;
 
   /** `accuracy` in K; `cycleEnd` in s. */
@@ -81,36 +83,45 @@ export class Automatic implements Scheme {
     this.dense = new Float64Array(3 * system.size);
     this.inflowBefore = column();
     this.slopeBefore = column();
+    this.heldRateBefore = column();
     this.controller.limit(0.1 * cycleEnd);
   }
 
   leave(time: number): void {
-    const { system, state } = this;
-    system.evaluate(state.unknowns, time);
-    system.linearise(state.unknowns, time);
-    this.inflowBefore.set(system.inflow);
-    this.slopeBefore.set(system.inflowSlope);
+    this.look(time);
+    this.inflowBefore.set(this.system.inflow);
+    this.slopeBefore.set(this.system.inflowSlope);
+    this.heldRateBefore.set(this.stage);
   }
 
   begin(time: number): void {
-    const { system, state } = this;
-    system.evaluate(state.unknowns, time);
-    system.linearise(state.unknowns, time);
+    this.look(time);
     this.controller.limit(Math.max(this.firstStep(), SMALLEST_FIRST_STEP * this.cycleEnd));
     this.linearised = true;
   }
 
+  /** F and ∂F/∂t in the system, and the rates of held unknowns in the scratch of a stage. */
+  private look(time: number): void {
+    const { system, state } = this;
+    system.evaluate(state.unknowns, time);
+    system.linearise(state.unknowns, time);
+    this.stage.fill(0);
+    system.heldChanges(state.unknowns, time, 1, this.stage);
+  }
+
   /** The step in which what changed at the edge, acting on each row alone, moves none by more than some local errors. */
   private firstStep(): number {
-    const { system, inflowBefore, slopeBefore, localError } = this;
+    const { system, inflowBefore, slopeBefore, heldRateBefore, localError } = this;
     const allowed = FIRST_STEP_ERRORS * localError;
     let first = Infinity;
     for (let row = 0; row < system.size; row++) {
       const heat = allowed * Math.abs(system.rowCapacity[row]);
       const jump = Math.abs(system.inflow[row] - inflowBefore[row]);
       const kink = Math.abs(system.inflowSlope[row] - slopeBefore[row]);
+      const rate = Math.abs(this.stage[row] - heldRateBefore[row]);
       if (jump > 0) first = Math.min(first, heat / jump);
       if (kink > 0) first = Math.min(first, Math.sqrt(heat / kink));
+      if (rate > 0) first = Math.min(first, allowed / rate);
     }
     return first;
   }
@@ -131,17 +142,18 @@ export class Automatic implements Scheme {
     this.point.set(state.unknowns);
     this.carried.set(state.stored);
     for (let i = 0; i < STAGES; i++) {
+      const stageTime = time + TIMES[i] * length;
       if (i > 0) {
         this.moveToStage(i);
-        system.evaluate(this.point, time + TIMES[i] * length);
+        system.evaluate(this.point, stageTime);
       }
-      this.solveStage(i, length);
+      this.solveStage(i, stageTime, length);
     }
     const { kelvin, row } = system.largestChange(this.stage);
     const error = kelvin / this.localError;
     if (error <= 1) {
       this.controller.accept(length, error);
-      this.accept(length);
+      this.accept(time + length, length);
       return ACCEPTED;
     }
     this.controller.reject(length, error < Infinity ? error : Infinity);
@@ -162,7 +174,7 @@ export class Automatic implements Scheme {
   }
 
   /** U, V and W of stage i, the system being evaluated at its point. */
-  private solveStage(i: number, length: number): void {
+  private solveStage(i: number, time: number, length: number): void {
     const { system, stage, lag, carried, product, heatStages, throughStages } = this;
     const { inflow, storage, inflowSlope } = system;
     const timeSlope = TIME_SLOPES[i] * length * length;
@@ -172,17 +184,19 @@ export class Automatic implements Scheme {
       stage[row] = length * inflow[row] + d / GAMMA + timeSlope * inflowSlope[row];
     }
     if (i > 0) heatStages.combine(stage, COUPLING[i], stage);
+    system.heldChanges(this.point, time, TIME_SLOPES[i] * length, stage);
     system.solve(stage);
     system.capacityTimes(stage, product);
     this.unknownStages.store(i, stage);
     heatStages.storeDifference(i, product, lag);
+    for (const row of system.heldRows) heatStages.set(row, i, 0);
     for (let heat = 0; heat < system.heats; heat++) {
       const rate = length * (system.rates[heat] + system.rateTimes(heat, stage)) + timeSlope * system.rateSlopes[heat];
       throughStages.set(heat, i, GAMMA * (rate + throughStages.sum(heat, COUPLING[i])));
     }
   }
 
-  private accept(length: number): void {
+  private accept(end: number, length: number): void {
     const { state, unknownStages, heatStages, throughStages } = this;
     this.before.set(state.unknowns);
     this.throughBefore.set(state.through);
@@ -191,6 +205,7 @@ export class Automatic implements Scheme {
     for (let heat = 0; heat < state.through.length; heat++) {
       state.through[heat] += throughStages.sum(heat, POINTS[LAST]) + throughStages.get(heat, LAST);
     }
+    this.system.hold(state.unknowns, end, state.stored, state.through);
     this.length = length;
     this.linearised = false;
   }

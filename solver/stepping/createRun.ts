@@ -42,10 +42,7 @@ class WallRun implements Run {
     this.settings = settings;
     this.points = points;
     this.cycle = cycle;
-    this.system = new WallSystem(layers, grid, cycle, {
-      storage: automatic ? 'fourthOrder' : 'plain',
-      heldFaces: automatic ? 'film' : 'imposed',
-    });
+    this.system = new WallSystem(layers, grid, cycle, automatic ? 'fourthOrder' : 'plain');
     const state = startState(this.system);
     this.start = new Float64Array(this.system.points);
     this.system.report(state.unknowns, 0, this.start);

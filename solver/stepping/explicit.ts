@@ -53,7 +53,7 @@ export class Explicit implements Scheme {
       change[row] = inflow[row] + (state.stored[row] - system.storage[row]);
     }
     for (let heat = 0; heat < system.heats; heat++) through[heat] = length * system.rates[heat];
-    system.imposedChanges(state.unknowns, time + length, change);
+    system.heldChanges(state.unknowns, time + length, 0, change);
     system.factorise(1, 0);
     system.solve(change);
     return this.last.finish(change, inflow, through, time + length);

@@ -52,8 +52,8 @@ export class StraightStep {
   }
 
   /**
-   * Moves the state to `time`: unknowns by `change`, stored and tracked heats by what flowed in. Imposed unknowns come last,
-   * and the heat that holds them is what their rows then lack.
+   * Moves the state to `time`: unknowns by `change`, stored and tracked heats by what flowed in. Held unknowns come last,
+   * and what their rows then store more came through the faces that hold them.
    */
   finish(change: Float64Array, inflow: Float64Array, through: Float64Array, time: number): Attempt {
     const { system, state } = this;
@@ -64,7 +64,7 @@ export class StraightStep {
       state.stored[row] += inflow[row];
     }
     for (let heat = 0; heat < system.heats; heat++) state.through[heat] += through[heat];
-    system.impose(state.unknowns, time, state.stored, state.through);
+    system.hold(state.unknowns, time, state.stored, state.through);
     return ACCEPTED;
   }
 

@@ -77,7 +77,7 @@ function whyUnusable(layers: readonly WallLayer[], grid: WallGrid): string | nul
       (length) =>
         usable(length) && usable(curves.heatCapacity(initial) * length) && usable(curves.conductivity(initial) / length),
     );
-    if (!rising || !computable) {
+    if (!rising || !computable || positions.length < 2) {
       return `The thickness or the material of ${layerNamed(name)} is too small or too large, by itself or beside the others, to compute with.`;
     }
   }

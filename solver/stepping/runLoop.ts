@@ -60,8 +60,7 @@ export class RunLoop {
   private enterNext(): void {
     if (this.at >= 0) this.scheme.leave(this.time);
     const interval = this.intervals[++this.at];
-    this.system.enter(interval);
-    this.system.impose(this.state.unknowns, this.time, this.state.stored, this.state.through);
+    this.system.enter(interval, this.state.unknowns, this.state.stored, this.state.through);
     this.scheme.begin(this.time, interval.jumped);
     this.observer.interval(interval);
   }

@@ -48,7 +48,7 @@ export class ThetaStep {
       change[row] = inflow[row] + theta * length * system.inflow[row] + (stored[row] - system.storage[row]);
     }
     system.linearise(unknowns, end);
-    system.imposedChanges(unknowns, end, change);
+    system.heldChanges(unknowns, end, 0, change);
     system.factorise(1, theta * length);
     system.solve(change);
     for (let row = 0; row < system.size; row++) atEnd[row] = unknowns[row] + change[row];
