@@ -42,9 +42,9 @@ function steadyError(
   storage: 'plain' | 'fourthOrder' = 'plain',
 ): number {
   const grid = kind === 'nodes' ? { nodes: elements + 1 } : { cells: elements };
-  const { system } = systemOf(rodOf(grid, { start: held(0), end }), { storage, heldFaces: 'imposed' });
+  const { system, state } = systemOf(rodOf(grid, { start: held(0), end }), storage);
   const place = Array.from({ length: system.size }, (_, i) => (kind === 'nodes' ? i : i + 0.5) / elements);
-  const found = steadyWithSource(system, place.map(source));
+  const found = steadyWithSource(system, state, place.map(source));
   return Math.max(...place.map((x, i) => Math.abs(found[i] - exact(x))));
 }
 

@@ -1,34 +1,35 @@
 /** Bodies for tests of schemes and of balances: a wall with sources in it, and a single decaying mode. */
 import { gridOf, temperatureRange, wallLayers } from '../../solver/grid';
-import { WallSystem, type HeatSystem, type Interval, type WallOptions } from '../../solver/heat';
+import { WallSystem, type HeatSystem, type Interval, type StorageKind } from '../../solver/heat';
 import { layCycle, type LaidCycle, type Project } from '../../solver/model';
+import { startState, type HeatState } from '../../solver/stepping';
 
 /** A laid cycle's first stage as one interval. */
 export const wholeStage = (cycle: LaidCycle): Interval => ({ stage: 0, from: cycle.stages[0].start, to: cycle.stages[0].end });
 
-/** The balances of a plan, in its first stage. */
-export function systemOf(project: Project, options: WallOptions): { system: WallSystem; cycle: LaidCycle } {
+/** The balances of a plan at the start of its first stage, and their state. */
+export function systemOf(project: Project, storage: StorageKind): { system: WallSystem; state: HeatState } {
   const cycle = layCycle(project);
   const layers = wallLayers(project);
-  const range = temperatureRange(layers, cycle);
-  const system = new WallSystem(layers, gridOf(project.settings, layers, cycle, range), cycle, options);
-  system.enter(wholeStage(cycle));
-  return { system, cycle };
+  const grid = gridOf(project.settings, layers, cycle, temperatureRange(layers, cycle));
+  const system = new WallSystem(layers, grid, cycle, storage);
+  const state = startState(system);
+  system.enter(wholeStage(cycle), state.unknowns, state.stored, state.through);
+  return { system, state };
 }
 
 /**
- * Steady temperatures of a linear wall with a source of its own: 0 = F(u) + C g, where C g is the source of every unknown, W/m³,
+ * Steady temperatures of a linear wall with a source of its own: 0 = F(u) + C g, where g is the source at every unknown, W/m³,
  * spread over the rows as the wall spreads its heat (C = dS/du at ρ c = 1).
  */
-export function steadyWithSource(system: WallSystem, sourceAt: ArrayLike<number>): Float64Array {
-  const u = system.initial();
+export function steadyWithSource(system: WallSystem, { unknowns: u }: HeatState, sourceAt: ArrayLike<number>): Float64Array {
   const source = new Float64Array(system.size);
   const rightHandSide = new Float64Array(system.size);
   system.evaluate(u, 0);
   system.linearise(u, 0);
   system.capacityTimes(Float64Array.from(sourceAt), source);
   for (let row = 0; row < system.size; row++) rightHandSide[row] = system.inflow[row] + source[row];
-  system.imposedChanges(u, 0, rightHandSide);
+  system.heldChanges(u, 0, 0, rightHandSide);
   system.factorise(0, 1);
   system.solve(rightHandSide);
   return u.map((value, row) => value + rightHandSide[row]);
@@ -47,6 +48,7 @@ export class DecayingMode implements HeatSystem {
   readonly inflowSlope = new Float64Array(1);
   readonly rateSlopes = new Float64Array(1);
   readonly rowCapacity = Float64Array.of(1);
+  readonly heldRows: readonly number[] = [];
   factorisations = 0;
   private readonly rate: number;
   private readonly amplitude: number;
@@ -79,8 +81,8 @@ export class DecayingMode implements HeatSystem {
   rateTimes(_heat: number, x: Float64Array): number {
     return -this.rate * x[0];
   }
-  imposedChanges(): void {}
-  impose(): void {}
+  heldChanges(): void {}
+  hold(): void {}
   largestChange(x: ArrayLike<number>): { kelvin: number; row: number } {
     return { kelvin: Math.abs(x[0]), row: 0 };
   }
