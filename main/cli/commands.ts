@@ -26,7 +26,8 @@ async function runFile(file: string, quiet: boolean, io: Io): Promise<{ project:
 function exitOf(outcome: Outcome, file: string, io: Io): ExitCode {
   if (outcome.reason === 'finished') return EXIT.done;
   io.remark(`${nameOf(file)}: ${outcome.message ?? outcome.reason}\n`);
-  return outcome.reason === 'cancelled' ? EXIT.interrupted : EXIT.notFinished;
+  if (outcome.reason === 'cancelled') return EXIT.interrupted;
+  return outcome.reason === 'invalid-project' ? EXIT.badPlan : EXIT.notFinished;
 }
 
 export interface RunOptions {
@@ -62,6 +63,7 @@ async function writeTables(
     try {
       await io.writeInto(folder, name, text);
     } catch (error) {
+      if ((error as NodeJS.ErrnoException).code === undefined) throw error;
       io.remark(`soakwright: ${wordFileError(error, `${folder}/${name}`, 'save')}\n`);
       return EXIT.noAccess;
     }
