@@ -14,12 +14,12 @@ export default defineConfig({
   plugins: [vue()],
   test: {
     projects: [
-      project('unit'),
+      project('unit', { testTimeout: 20_000 }),
       project('published', { testTimeout: 60_000 }),
       project('property', { testTimeout: 60_000 }),
       project('protocol'),
       project('migrations'),
-      project('app', { environment: 'happy-dom' }),
+      project('app', { environment: 'happy-dom', testTimeout: 20_000 }),
       project('end-to-end/chromium', endToEnd),
       project('end-to-end/electron', endToEnd),
     ],

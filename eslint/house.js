@@ -6,7 +6,7 @@
  */
 const solverBelow = {
   linear: [],
-  model: ['solver/model/migrations'],
+  model: ['solver/model/migrations', 'solver/model/quantities'],
   materials: ['solver/model'],
   grid: ['solver/model', 'solver/materials'],
   heat: ['solver/model', 'solver/materials', 'solver/grid', 'solver/linear'],
@@ -16,7 +16,7 @@ const solverBelow = {
 const physics = Object.keys(solverBelow).map((room) => `solver/${room}`);
 
 /** What every part of the app may see of the solver. */
-const plan = ['solver/model', 'solver/materials', 'solver/service/protocol'];
+const plan = ['solver/model', 'solver/model/quantities', 'solver/materials', 'solver/service/protocol'];
 const meetingPlaces = ['app/stores', 'app/commands', 'app/draw', 'app/ui'];
 
 export const features = [
@@ -35,27 +35,31 @@ export const features = [
 export const rooms = {
   ...Object.fromEntries(Object.entries(solverBelow).map(([room, below]) => [`solver/${room}`, below])),
   'solver/model/migrations': [],
+  'solver/model/quantities': [],
   'solver/planning': [...physics],
   'solver/service/protocol': ['solver/model'],
   'solver/service/runner': [...physics, 'solver/planning', 'solver/service/protocol'],
   'solver/service/hosts': ['solver/model', 'solver/planning', 'solver/service/protocol', 'solver/service/runner'],
   'solver/service': ['solver/model', 'solver/service/protocol', 'solver/service/runner', 'solver/service/hosts'],
 
-  app: [...plan, ...meetingPlaces, 'app/bridge', ...features.map((feature) => `app/${feature}`)],
+  app: [...plan, ...meetingPlaces, 'app/bridge', 'samples', ...features.map((feature) => `app/${feature}`)],
   'app/stores': [...plan, 'app/commands', 'app/draw', 'app/bridge', 'type:app/bridge/contract', 'samples'],
   'app/commands': plan,
   'app/draw': plan,
-  'app/ui': [...plan, 'app/draw'],
+  'app/ui': [...plan, 'app/commands', 'app/draw'],
   'app/bridge': ['solver/service/protocol', 'type:main/desktop/contract', 'url:solver/service/hosts/worker.ts'],
-  ...Object.fromEntries(features.map((feature) => [`app/${feature}`, [...plan, ...meetingPlaces]])),
+  ...Object.fromEntries(features.map((feature) => [`app/${feature}`, [...plan, ...meetingPlaces, 'type:app/bridge', 'samples']])),
 
   main: [],
   'main/files': [],
   'main/desktop': ['main', 'main/files', 'solver/service/protocol'],
-  'main/browser': ['main'],
+  'main/browser': ['main', 'samples'],
   'main/cli': ['main/files', 'solver/model', 'solver/materials', 'solver/service', 'solver/service/protocol', 'samples'],
   samples: [],
 };
+
+/** Outside all rooms, and open to each of them that runs on a screen: the program's own name and version. */
+export const manifest = 'package.json';
 
 /** Inside a room: files that must not know each other (path starts, without ending). */
 export const strangers = [{ from: 'app/stores/project', to: 'app/stores/run' }];

@@ -2,7 +2,7 @@
 import { isBuiltin } from 'node:module';
 import { dirname, join, relative, sep } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { packages, rooms, strangers } from './house.js';
+import { manifest, packages, rooms, strangers } from './house.js';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
 const roomNames = Object.keys(rooms).sort((a, b) => b.length - a.length);
@@ -38,10 +38,10 @@ function refuseOwn(file, specifier, kind) {
   const row = rooms[from];
   if (kind === 'type' && row.includes(`type:${path.replace(/\.ts$/, '')}`)) return null;
   if (kind === 'url' && row.includes(`url:${path}`)) return null;
-  if (to === undefined) return `${path} is outside the rooms of the house`;
+  if (to === undefined) return path === manifest && inside(file, 'app') ? null : `${path} is outside the rooms of the house`;
   if (!row.includes(to)) return `${from} must not import ${to}`;
   const throughIndex = [to, `${to}/index`, `${to}/index.ts`].includes(path);
-  return throughIndex || to === 'samples' || to === 'main' ? null : `${to} is entered only through its index`;
+  return throughIndex || inside(to, from) || to === 'samples' || to === 'main' ? null : `${to} is entered only through its index`;
 }
 
 function refusePackage(file, name, kind) {

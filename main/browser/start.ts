@@ -3,8 +3,9 @@
  * and serves the same app to a browser on this machine.
  */
 import { spawn, spawnSync } from 'node:child_process';
-import { existsSync, readdirSync } from 'node:fs';
+import { existsSync } from 'node:fs';
 import { basename, join, resolve } from 'node:path';
+import { samples } from '../../samples/list';
 import { isStale } from './freshness';
 import { openBrowser } from './openBrowser';
 import { findRuntime } from './runtime';
@@ -16,13 +17,6 @@ const say = (line: string): void => console.log(line);
 
 const SOURCES = ['app', 'main', 'solver', 'samples', 'package-lock.json', 'vite.config.ts', 'electron.config.ts'].map(inRoot);
 const BUILT = [inRoot('out/app/index.html'), inRoot('out/desktop/main/main.js')];
-
-/** The sample that a start without a file opens: the first one by name. */
-function firstSample(): string | null {
-  const folder = inRoot('samples');
-  const names = existsSync(folder) ? readdirSync(folder).filter((name) => name.endsWith('.soak')) : [];
-  return names.sort()[0]?.replace(/\.soak$/, '') ?? null;
-}
 
 function build(): boolean {
   say('Building Soakwright …');
@@ -38,8 +32,8 @@ function build(): boolean {
 const CAME_UP_MS = 5000;
 
 /** Runs the window and ends with it. */
-function startDesktop(program: string, file: string | undefined, sample: string | null): void {
-  const args = file !== undefined ? [resolve(file)] : sample !== null ? [`--sample=${sample}`] : [];
+function startDesktop(program: string, file: string | undefined, sample: string): void {
+  const args = file !== undefined ? [resolve(file)] : [`--sample=${sample}`];
   // As root, as in a container, the runtime refuses to start its sandbox; without root it is never switched off.
   const asRoot = process.getuid?.() === 0 ? ['--no-sandbox'] : [];
   const started = performance.now();
@@ -52,9 +46,9 @@ function startDesktop(program: string, file: string | undefined, sample: string 
   });
 }
 
-async function startBrowser(reason: string, file: string | undefined, sample: string | null): Promise<void> {
+async function startBrowser(reason: string, file: string | undefined, sample: string): Promise<void> {
   const server = await serveApp(inRoot('out/app'));
-  const url = file === undefined && sample !== null ? `${server.url}?sample=${sample}` : server.url;
+  const url = file === undefined ? `${server.url}?sample=${sample}` : server.url;
   say(`${reason}, so Soakwright opens in your browser: ${url}`);
   if (file !== undefined) say(`A page cannot be handed a file from here: choose ${basename(file)} with Open in the page.`);
   if (!(await openBrowser(url))) say('No browser could be opened from here: open that address in one on this machine.');
@@ -63,6 +57,8 @@ async function startBrowser(reason: string, file: string | undefined, sample: st
 }
 
 const [file] = process.argv.slice(2);
+/** What a start without a file opens. */
+const sample = samples[0].id;
 if (file !== undefined && !existsSync(file)) {
   console.error(`There is no file ${file}.`);
   process.exit(5);
@@ -72,5 +68,5 @@ if (BUILT.some((built) => isStale(built, SOURCES)) && !build()) {
   process.exit(70);
 }
 const runtime = findRuntime(inRoot('node_modules/electron'), process.env['ELECTRON_OVERRIDE_DIST_PATH']);
-if (runtime.kind === 'found') startDesktop(runtime.program, file, firstSample());
-else await startBrowser(`Electron's runtime is not here (${runtime.reason})`, file, firstSample());
+if (runtime.kind === 'found') startDesktop(runtime.program, file, sample);
+else await startBrowser(`Electron's runtime is not here (${runtime.reason})`, file, sample);
