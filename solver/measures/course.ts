@@ -42,7 +42,7 @@ export const holdsAt = (condition: Condition, value: number): boolean => beyond(
 
 export class Course {
   readonly pieces: readonly Piece[];
-  private readonly known: Sample[] = [];
+  private known: readonly Sample[] | null = null;
 
   /** Pieces in order, from 0 to 1 without gaps. */
   constructor(pieces: readonly Piece[]) {
@@ -60,14 +60,23 @@ export class Course {
 
   /** Values at both ends, at the joints of pieces and at every turning point: between neighbours the course is monotone. */
   samples(): readonly Sample[] {
-    if (this.known.length === 0) {
-      for (const piece of this.pieces) {
-        const turns = turnsOf(piece.shape).map((u) => piece.from + u * (piece.to - piece.from));
-        for (const fraction of [piece.from, ...turns]) this.known.push({ fraction, value: valueIn(piece, fraction) });
-      }
-      this.known.push({ fraction: 1, value: this.at(1) });
-    }
+    this.known ??= this.findSamples();
     return this.known;
+  }
+
+  private findSamples(): readonly Sample[] {
+    const { pieces } = this;
+    const end = { fraction: 1, value: valueIn(pieces[pieces.length - 1], 1) };
+    // Nearly every step of a long run: one monotone piece.
+    const turns = pieces.map(({ shape }) => turnsOf(shape));
+    if (pieces.length === 1 && turns[0].length === 0) return [{ fraction: 0, value: valueIn(pieces[0], 0) }, end];
+    const samples = pieces.flatMap((piece, i) =>
+      [0, ...turns[i]].map((u) => {
+        const fraction = piece.from + u * (piece.to - piece.from);
+        return { fraction, value: valueIn(piece, fraction) };
+      }),
+    );
+    return [...samples, end];
   }
 
   /** The same for a part of the step. */

@@ -32,7 +32,7 @@ export interface Extremes {
   readonly beside: [number, number, number, number];
 }
 
-export const differenceIn = ({ coldest, hottest }: Extremes): number => hottest.value - coldest.value;
+/** The largest difference within one material, K. */
 export const differenceInPiece = ({ coldestInPiece, hottestInPiece }: Extremes): number =>
   hottestInPiece.value - coldestInPiece.value;
 
@@ -51,6 +51,8 @@ export class ExtremesReader {
   private readonly pieces: readonly MaterialPiece[];
   private readonly low: Peak = { position: 0, value: 0 };
   private readonly high: Peak = { position: 0, value: 0 };
+  private lowBeside = 0;
+  private highBeside = 0;
   private readonly peak: Peak = { position: 0, value: 0 };
 
   constructor(points: FieldPoints, part: Pick<Part, 'layers'>) {
@@ -64,38 +66,38 @@ export class ExtremesReader {
     out.coldest.value = Infinity;
     out.hottest.value = -Infinity;
     for (const piece of this.pieces) {
-      const [cold, hot] = this.readPiece(profile, piece);
+      this.readPiece(profile, piece);
       const { low, high } = this;
       if (low.value < out.coldest.value) {
         copy(low, out.coldest);
-        out.beside[0] = cold;
+        out.beside[0] = this.lowBeside;
       }
       if (high.value > out.hottest.value) {
         copy(high, out.hottest);
-        out.beside[1] = hot;
+        out.beside[1] = this.highBeside;
       }
       if (high.value - low.value > widest) {
         widest = high.value - low.value;
         copy(low, out.coldestInPiece);
         copy(high, out.hottestInPiece);
         out.piece = piece;
-        out.beside[2] = cold;
-        out.beside[3] = hot;
+        out.beside[2] = this.lowBeside;
+        out.beside[3] = this.highBeside;
       }
     }
   }
 
-  /** Extremes of one piece into `low` and `high`; the points beside which they lie. */
-  private readPiece(profile: Float64Array, piece: MaterialPiece): [number, number] {
+  /** Extremes of one piece into `low` and `high`, and the points beside which they lie. */
+  private readPiece(profile: Float64Array, piece: MaterialPiece): void {
     const { low, high, peak } = this;
     const { position, layerStart } = this.points;
-    let [coldest, hottest] = [0, 0];
     low.value = Infinity;
     high.value = -Infinity;
     for (let layer = piece.first; layer <= piece.last; layer++) {
       const first = layerStart[layer];
       const last = layerStart[layer + 1] - 1;
-      let [cold, hot] = [first, first];
+      let cold = first;
+      let hot = first;
       for (let i = first + 1; i <= last; i++) {
         if (profile[i] < profile[cold]) cold = i;
         else if (profile[i] > profile[hot]) hot = i;
@@ -103,15 +105,14 @@ export class ExtremesReader {
       peakBeside(position, profile, first, last, cold, -1, peak);
       if (peak.value < low.value) {
         copy(peak, low);
-        coldest = cold;
+        this.lowBeside = cold;
       }
       peakBeside(position, profile, first, last, hot, 1, peak);
       if (peak.value > high.value) {
         copy(peak, high);
-        hottest = hot;
+        this.highBeside = hot;
       }
     }
-    return [coldest, hottest];
   }
 }
 

@@ -3,27 +3,29 @@
  * the largest within one material.
  *
  * Each is smooth while its extreme stays beside the same points, and then the quartic through the quarters of the step tells
- * it. Where an extreme moves on, or leaps from one face to the other, the step is halved until the quartics agree with the
- * dense output at the eighths between, within `tolerance`, or the piece is 1/1024 of the step.
+ * it. Where an extreme moves on, or leaps from one face to the other, the step is halved until the quartic agrees with the
+ * dense output at the eighths between, within `tolerance`, or the piece is 1/1024 of the step. The eighths are spared where
+ * all points move along straight lines: what is lowest of straight lines at both ends is so all the way.
  */
 import type { Part } from '../model';
 import type { FieldPoints } from '../stepping';
 import { Course, type Piece } from './course';
-import { differenceIn, differenceInPiece, ExtremesReader, newExtremes, type Extremes } from './extremes';
+import { differenceInPiece, ExtremesReader, newExtremes, type Extremes } from './extremes';
 import type { Quarters } from './quarters';
 import { quarticThrough, valueOf } from './quartic';
 
-/** What the courses of a field are of: in the order of `fieldQuantities`. */
+/** What the courses of a field are of. */
 export type FieldQuantity = 'coldest' | 'hottest' | 'part' | 'material';
 
 /** One number of a field's extremes, °C for the points and K for the differences. */
-export const fieldQuantities: Record<FieldQuantity, (extremes: Extremes) => number> = {
+const figureOf: Record<FieldQuantity, (extremes: Extremes) => number> = {
   coldest: (extremes) => extremes.coldest.value,
   hottest: (extremes) => extremes.hottest.value,
-  part: differenceIn,
+  part: (extremes) => extremes.hottest.value - extremes.coldest.value,
   material: differenceInPiece,
 };
-const QUANTITIES = Object.keys(fieldQuantities) as FieldQuantity[];
+/** The entries of `beside` that a figure depends on. */
+const PLACES: Record<FieldQuantity, readonly number[]> = { coldest: [0], hottest: [1], part: [0, 1], material: [2, 3] };
 
 const DEEPEST = 10;
 const EIGHTHS = [1 / 8, 3 / 8, 5 / 8, 7 / 8];
@@ -33,9 +35,10 @@ export class FieldOverStep {
   private readonly tolerance: number;
   private readonly profile: Float64Array;
   private readonly atQuarters: Extremes[] = [0, 1, 2, 3, 4].map(newExtremes);
-  private readonly scratch = newExtremes();
+  /** Extremes between the quarters, as far as they were asked for, by fraction. */
+  private readonly between = new Map<number, Extremes>();
+  private readonly courses = new Map<FieldQuantity, Course>();
   private quarters!: Quarters;
-  private courses!: Record<FieldQuantity, Course>;
 
   /** `tolerance`: how far a course may lie from the dense output where an extreme moves on, K. */
   constructor(points: FieldPoints, part: Pick<Part, 'layers'>, tolerance: number) {
@@ -46,26 +49,31 @@ export class FieldOverStep {
 
   read(quarters: Quarters): void {
     this.quarters = quarters;
-    quarters.rows.forEach((row, i) => this.reader.read(row, this.atQuarters[i]));
-    const pieces: Record<FieldQuantity, Piece[]> = { coldest: [], hottest: [], part: [], material: [] };
-    this.divide(0, 1, this.atQuarters, pieces, 0);
-    this.courses = {
-      coldest: new Course(pieces.coldest),
-      hottest: new Course(pieces.hottest),
-      part: new Course(pieces.part),
-      material: new Course(pieces.material),
-    };
+    this.between.clear();
+    this.courses.clear();
+    for (let i = 0; i < 5; i++) this.reader.read(quarters.rows[i], this.atQuarters[i]);
   }
 
   course(quantity: FieldQuantity): Course {
-    return this.courses[quantity];
+    let course = this.courses.get(quantity);
+    if (course === undefined) {
+      course = new Course(this.pieces(quantity, 0, 1, this.atQuarters, 0));
+      this.courses.set(quantity, course);
+    }
+    return course;
   }
 
-  /** Extremes of the field at a fraction of the step; valid until the next call. */
+  /** Extremes of the field at a fraction of the step; not to be changed. */
   extremesAt(fraction: number): Extremes {
     const quarter = fraction * 4;
     if (Number.isInteger(quarter)) return this.atQuarters[quarter];
-    return this.readAt(fraction, this.scratch);
+    let extremes = this.between.get(fraction);
+    if (extremes === undefined) {
+      this.quarters.step.at(fraction, this.profile);
+      extremes = this.extremesOf(this.profile);
+      this.between.set(fraction, extremes);
+    }
+    return extremes;
   }
 
   /** Extremes of any profile at the points of the part. */
@@ -75,35 +83,26 @@ export class FieldOverStep {
     return extremes;
   }
 
-  private readAt(fraction: number, out: Extremes): Extremes {
-    this.quarters.step.at(fraction, this.profile);
-    this.reader.read(this.profile, out);
-    return out;
-  }
-
-  /** Adds pieces from `from` to `to`, whose extremes at the five quarters between are known. */
-  private divide(from: number, to: number, known: Extremes[], pieces: Record<FieldQuantity, Piece[]>, depth: number): void {
-    const shapes = QUANTITIES.map((quantity) => {
-      const [v0, v1, v2, v3, v4] = known.map(fieldQuantities[quantity]);
-      return quarticThrough(v0, v1, v2, v3, v4);
-    });
-    if (depth < DEEPEST && !stayBesideTheSamePoints(known)) {
-      const between = EIGHTHS.map((part) => this.readAt(from + part * (to - from), newExtremes()));
-      const misfit = QUANTITIES.some((quantity, q) =>
-        between.some(
-          (extremes, i) => Math.abs(fieldQuantities[quantity](extremes) - valueOf(shapes[q], EIGHTHS[i])) > this.tolerance,
-        ),
-      );
-      if (misfit) {
-        const middle = from + 0.5 * (to - from);
-        this.divide(from, middle, [known[0], between[0], known[1], between[1], known[2]], pieces, depth + 1);
-        this.divide(middle, to, [known[2], between[2], known[3], between[3], known[4]], pieces, depth + 1);
-        return;
-      }
-    }
-    QUANTITIES.forEach((quantity, q) => pieces[quantity].push({ from, to, shape: shapes[q] }));
+  /** The pieces from `from` to `to`, whose extremes at the five quarters between are known. */
+  private pieces(quantity: FieldQuantity, from: number, to: number, known: readonly Extremes[], depth: number): Piece[] {
+    const figure = figureOf[quantity];
+    const [k0, k1, k2, k3, k4] = known;
+    const shape = quarticThrough(figure(k0), figure(k1), figure(k2), figure(k3), figure(k4));
+    if (depth === DEEPEST || (this.quarters.straight && stayBeside(known, PLACES[quantity]))) return [{ from, to, shape }];
+    const between = EIGHTHS.map((part) => this.extremesAt(from + part * (to - from)));
+    const fits = between.every((extremes, i) => Math.abs(figure(extremes) - valueOf(shape, EIGHTHS[i])) <= this.tolerance);
+    if (fits) return [{ from, to, shape }];
+    const middle = from + 0.5 * (to - from);
+    return [
+      ...this.pieces(quantity, from, middle, [k0, between[0], k1, between[1], k2], depth + 1),
+      ...this.pieces(quantity, middle, to, [k2, between[2], k3, between[3], k4], depth + 1),
+    ];
   }
 }
 
-const stayBesideTheSamePoints = ([first, ...rest]: Extremes[]): boolean =>
-  rest.every(({ beside }) => beside.every((point, i) => point === first.beside[i]));
+function stayBeside(known: readonly Extremes[], places: readonly number[]): boolean {
+  for (const place of places) {
+    for (let i = 1; i < known.length; i++) if (known[i].beside[place] !== known[0].beside[place]) return false;
+  }
+  return true;
+}

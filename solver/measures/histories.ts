@@ -9,8 +9,8 @@ import type { FieldPoints } from '../stepping';
 import { Course } from './course';
 import { differenceInPiece, type Extremes } from './extremes';
 import type { FieldOverStep } from './field';
-import { Growing } from './growing';
 import type { Quarters } from './quarters';
+import { Table } from './table';
 
 /** An extreme less marked than this is rounding, K. */
 const MARKED_K = 1e-6;
@@ -32,8 +32,7 @@ export class ProbeReading {
 
   /** Its temperature over a step, °C. */
   over({ rows }: Quarters): Course {
-    const [v0, v1, v2, v3, v4] = rows.map((row) => this.in(row));
-    return Course.through(v0, v1, v2, v3, v4);
+    return Course.through(this.in(rows[0]), this.in(rows[1]), this.in(rows[2]), this.in(rows[3]), this.in(rows[4]));
   }
 
   /** Its temperature in one profile, °C. */
@@ -51,6 +50,8 @@ export interface Instant {
   readonly fraction: number;
 }
 
+const NONE: readonly Instant[] = [];
+
 /** Given times, handed out to the steps in which they lie. */
 export class Instants {
   private readonly times: Float64Array;
@@ -62,8 +63,10 @@ export class Instants {
   }
 
   /** Those before the end of a step, or also at its end, that no earlier step had; to be asked once a step, in order. */
-  upTo(end: 'before' | 'at', quarters: Quarters): Instant[] {
+  upTo(end: 'before' | 'at', quarters: Quarters): readonly Instant[] {
     const { to } = quarters.step;
+    const due = this.times[this.next];
+    if (!(end === 'at' ? due <= to : due < to)) return NONE;
     const found: Instant[] = [];
     for (; this.next < this.times.length; this.next++) {
       const time = this.times[this.next];
@@ -77,86 +80,71 @@ export class Instants {
 export class ProbeRecorder {
   readonly reading: ProbeReading;
   private readonly atStart: number;
-  private readonly time = new Growing();
-  private readonly temperature = new Growing();
+  private readonly table: Table;
 
-  /** `start`: the profile at time 0, before any exposure acts. */
-  constructor(reading: ProbeReading, start: Float64Array) {
+  /** `start`: the profile at time 0, before any exposure acts; `end`: end of the cycle, s. */
+  constructor(reading: ProbeReading, start: Float64Array, end: number) {
     this.reading = reading;
     this.atStart = reading.in(start);
+    this.table = new Table(1, end);
   }
 
   observe(quarters: Quarters, course: Course, rows: readonly Instant[]): void {
+    const { table } = this;
+    const { from, to } = quarters.step;
     const samples = course.samples();
     const [before, after] = [samples[0].value, samples[samples.length - 1].value];
-    const marked = samples
-      .slice(1, -1)
-      .filter(({ value }) => Math.abs(value - before) > MARKED_K && Math.abs(value - after) > MARKED_K)
-      .map(({ fraction }) => ({ fraction, time: quarters.time(fraction) }));
-    if (this.time.length === 0) this.push(quarters.step.from, this.atStart);
-    if (Math.abs(this.temperature.last() - before) > JUMP_K) this.push(quarters.step.from, before);
-    for (const { time, fraction } of inOrder([...marked, ...rows])) this.push(time, course.at(fraction));
-    this.push(quarters.step.to, after);
-  }
-
-  private push(time: number, temperature: number): void {
-    this.time.push(time);
-    this.temperature.push(temperature);
+    if (table.empty) table.add([from, this.atStart], false);
+    if (Math.abs(table.last(1) - before) > JUMP_K) table.add([from, before], false);
+    if (samples.length > 2 || rows.length > 0) {
+      const marked = samples
+        .filter(({ value }) => Math.abs(value - before) > MARKED_K && Math.abs(value - after) > MARKED_K)
+        .map(({ fraction }) => ({ fraction, time: quarters.time(fraction) }));
+      for (const { time, fraction } of inOrder([...marked, ...rows])) table.add([time, course.at(fraction)], false);
+    }
+    table.add([to, after], true);
   }
 
   history(): ProbeHistory {
     const { probe, position_m } = this.reading;
-    return {
-      probe: probe.id,
-      name: probe.name,
-      position_m,
-      time_s: this.time.toArray(),
-      temperature_C: this.temperature.toArray(),
-    };
+    const [time_s, temperature_C] = [this.table.column(0), this.table.column(1)];
+    return { probe: probe.id, name: probe.name, position_m, time_s, temperature_C };
   }
 }
 
 export class FieldRecorder {
   private readonly atStart: Extremes;
-  private readonly time = new Growing();
-  private readonly coldest = new Growing();
-  private readonly hottest = new Growing();
-  private readonly within = new Growing();
+  private readonly table: Table;
 
-  /** `start`: extremes of the profile at time 0, before any exposure acts. */
-  constructor(start: Extremes) {
+  /** `start`: extremes of the profile at time 0, before any exposure acts; `end`: end of the cycle, s. */
+  constructor(start: Extremes, end: number) {
     this.atStart = start;
+    this.table = new Table(3, end);
   }
 
   observe(quarters: Quarters, field: FieldOverStep, rows: readonly Instant[]): void {
+    const { table } = this;
     const { from, to } = quarters.step;
-    if (this.time.length === 0) this.push(from, this.atStart);
+    if (table.empty) table.add([from, ...figuresOf(this.atStart)], false);
     const before = field.extremesAt(0);
-    if (this.differs(before)) this.push(from, before);
-    for (const { time, fraction } of inOrder(rows)) this.push(time, field.extremesAt(fraction));
-    this.push(to, field.extremesAt(1));
-  }
-
-  private differs({ coldest, hottest }: Extremes): boolean {
-    return Math.abs(this.coldest.last() - coldest.value) > JUMP_K || Math.abs(this.hottest.last() - hottest.value) > JUMP_K;
-  }
-
-  private push(time: number, extremes: Extremes): void {
-    this.time.push(time);
-    this.coldest.push(extremes.coldest.value);
-    this.hottest.push(extremes.hottest.value);
-    this.within.push(differenceInPiece(extremes));
+    const jump =
+      Math.abs(before.coldest.value - table.last(1)) > JUMP_K || Math.abs(before.hottest.value - table.last(2)) > JUMP_K;
+    if (jump) table.add([from, ...figuresOf(before)], false);
+    for (const { time, fraction } of inOrder(rows)) table.add([time, ...figuresOf(field.extremesAt(fraction))], false);
+    table.add([to, ...figuresOf(field.extremesAt(1))], true);
   }
 
   history(): FieldHistory {
-    return {
-      time_s: this.time.toArray(),
-      coldest_C: this.coldest.toArray(),
-      hottest_C: this.hottest.toArray(),
-      withinMaterial_K: this.within.toArray(),
-    };
+    const [time_s, coldest_C, hottest_C, withinMaterial_K] = [0, 1, 2, 3].map((column) => this.table.column(column));
+    return { time_s, coldest_C, hottest_C, withinMaterial_K };
   }
 }
+
+const figuresOf = (extremes: Extremes): [number, number, number] => [
+  extremes.coldest.value,
+  extremes.hottest.value,
+  differenceInPiece(extremes),
+];
 
 /** Instants strictly inside a step, ascending. */
 const inOrder = (instants: readonly Instant[]): Instant[] =>

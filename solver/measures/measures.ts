@@ -1,5 +1,5 @@
 /** Everything that is drawn from the history of one run, while it runs. */
-import { rowTimes, type Answer, type LaidCycle, type Project, type Requirement, type RunResult } from '../model';
+import { rowTimes, type LaidCycle, type Project, type Requirement, type RunResult } from '../model';
 import { layerAt } from '../grid';
 import type { Run, Step } from '../stepping';
 import type { Course } from './course';
@@ -31,54 +31,53 @@ export function createMeasures(project: Project, { points, cycle, start }: Pick<
   const quarters = new Quarters(points.position.length);
   const rows = new Instants(rowTimes(project, cycle));
   const field = new FieldOverStep(points, project.part, COURSE_SHARE * project.settings.accuracy);
-  const fieldRecorder = new FieldRecorder(field.extremesOf(start));
+  const fieldRecorder = new FieldRecorder(field.extremesOf(start), cycle.end);
   const firsts = new Firsts(project.part, (depth) => layerAt(points, depth));
   const slowest = new SlowestFinder(project, points, cycle);
   const frames = new FrameRecorder(points, cycle);
-  const recorders = project.probes.map((probe) => new ProbeRecorder(new ProbeReading(project, probe, points), start));
-  const tallies = project.requirements.map(
-    (requirement) => new Tally(conditionOf(requirement.must), layWindow(requirement, cycle), cycle.end),
-  );
+  const recorders = project.probes.map((probe) => new ProbeRecorder(new ProbeReading(project, probe, points), start, cycle.end));
+  const probeCourses: Course[] = [];
+  const watched = project.requirements.map((requirement) => ({
+    requirement,
+    tally: new Tally(conditionOf(requirement.must), layWindow(requirement, cycle), cycle.end),
+    course: courseOf(requirement),
+    placeAt: placeOf(requirement),
+  }));
   let reached = 0;
 
   function observe(step: Step): void {
     quarters.read(step);
     field.read(quarters);
     const rowsInside = rows.upTo('before', quarters);
-    const courses = new Map<string, Course>();
-    for (const recorder of recorders) {
-      const course = recorder.reading.over(quarters);
-      courses.set(recorder.reading.probe.id, course);
-      recorder.observe(quarters, course, rowsInside);
-    }
+    recorders.forEach((recorder, i) => {
+      probeCourses[i] = recorder.reading.over(quarters);
+      recorder.observe(quarters, probeCourses[i], rowsInside);
+    });
     fieldRecorder.observe(quarters, field, rowsInside);
     firsts.observe(quarters, field);
     slowest.observe(quarters);
     frames.observe(quarters);
-    project.requirements.forEach((requirement, i) => {
-      tallies[i].observe(quarters, courseOf(requirement, courses), placeOf(requirement));
-    });
+    watched.forEach(({ tally, course, placeAt }) => tally.observe(quarters, course(), placeAt));
     reached = step.to;
   }
 
-  function courseOf({ of }: Requirement, courses: Map<string, Course>): Course {
-    if ('point' in of) return field.course(of.point);
-    if ('difference' in of) return field.course(of.difference);
-    const course = courses.get(of.probe);
-    if (course === undefined) throw new RangeError(`no probe "${of.probe}" in the plan`);
-    return course;
+  /** What gives the course of a requirement's subject over the step in hand. */
+  function courseOf({ of }: Requirement): () => Course {
+    if ('point' in of) return () => field.course(of.point);
+    if ('difference' in of) return () => field.course(of.difference);
+    const index = project.probes.findIndex(({ id }) => id === of.probe);
+    return () => probeCourses[index];
   }
 
   function placeOf({ of }: Requirement): (fraction: number) => number | null {
     if (!('point' in of)) return () => null;
-    const { point } = of;
-    return (fraction) => field.extremesAt(fraction)[point].position;
+    return (fraction) => field.extremesAt(fraction)[of.point].position;
   }
 
   return {
     observe,
     measured: () => ({
-      answers: project.requirements.map((requirement, i): Answer => judge(requirement, tallies[i], cycle, reached)),
+      answers: watched.map(({ requirement, tally }) => judge(requirement, tally, cycle, reached)),
       first: { slowest: slowest.whole(), ...firsts.answers() },
       stages: stageTimes(cycle, reached, slowest.stages()),
       probes: recorders.map((recorder) => recorder.history()),

@@ -5,20 +5,24 @@ import type { Step } from '../stepping';
  * Valid as long as the step.
  */
 export class Quarters {
-  private readonly inner: Float64Array[];
   step!: Step;
   /** Temperatures at the field's points, °C, one array a quarter. */
-  rows: readonly Float64Array[] = [];
+  readonly rows: Float64Array[];
+
+  /** Whether every point moves along a straight line, as the schemes with a chosen step do. */
+  straight = false;
 
   constructor(points: number) {
-    this.inner = [0, 1, 2].map(() => new Float64Array(points));
+    this.rows = [0, 1, 2, 3, 4].map(() => new Float64Array(points));
   }
 
-  read(step: Step): this {
+  read(step: Step): void {
+    const { rows } = this;
     this.step = step;
-    this.inner.forEach((row, i) => step.at((i + 1) / 4, row));
-    this.rows = [step.before, ...this.inner, step.after];
-    return this;
+    rows[0] = step.before;
+    for (let i = 1; i < 4; i++) step.at(i / 4, rows[i]);
+    rows[4] = step.after;
+    this.straight = isStraight(rows);
   }
 
   /** Cycle time at a fraction of the step, s; the ends are met exactly. */
@@ -31,4 +35,16 @@ export class Quarters {
     const { from, to } = this.step;
     return Math.min(1, Math.max(0, (time - from) / (to - from)));
   }
+}
+
+/** Rounding of a straight line, K. */
+const STRAIGHT_K = 1e-9;
+
+function isStraight([r0, r1, r2, r3, r4]: readonly Float64Array[]): boolean {
+  for (let i = 0; i < r0.length; i++) {
+    const move = r4[i] - r0[i];
+    if (Math.abs(r0[i] + 0.5 * move - r2[i]) > STRAIGHT_K) return false;
+    if (Math.abs(r0[i] + 0.25 * move - r1[i]) > STRAIGHT_K || Math.abs(r0[i] + 0.75 * move - r3[i]) > STRAIGHT_K) return false;
+  }
+  return true;
 }

@@ -34,12 +34,21 @@ export function valueOf(p: Polynomial, u: number): number {
 
 const slopeOf = (p: Polynomial): Polynomial => p.slice(1).map((c, i) => c * (i + 1));
 
+const NO_TURNS: readonly number[] = [];
+
+/** Whether p surely only rises or only falls from 0 to 1: the Bernstein coefficients of its slope, which enclose it, have one sign. */
+function isMonotone(p: Polynomial): boolean {
+  const b0 = p[1];
+  const b1 = b0 + (2 / 3) * p[2];
+  const b2 = b0 + (4 / 3) * p[2] + p[3];
+  const b3 = b0 + 2 * p[2] + 3 * p[3] + 4 * p[4];
+  return (b0 >= 0 && b1 >= 0 && b2 >= 0 && b3 >= 0) || (b0 <= 0 && b1 <= 0 && b2 <= 0 && b3 <= 0);
+}
+
 /** Where p turns from rising to falling or back, strictly inside (0, 1), ascending. */
-export function turnsOf(p: Polynomial): number[] {
-  const [, c1, c2, c3, c4] = p;
-  // Bernstein coefficients of the slope enclose it: all of one sign, no turn.
-  const [b0, b1, b2, b3] = [c1, c1 + (2 / 3) * c2, c1 + (4 / 3) * c2 + c3, c1 + 2 * c2 + 3 * c3 + 4 * c4];
-  if ((b0 >= 0 && b1 >= 0 && b2 >= 0 && b3 >= 0) || (b0 <= 0 && b1 <= 0 && b2 <= 0 && b3 <= 0)) return [];
+export function turnsOf(p: Polynomial): readonly number[] {
+  if (isMonotone(p)) return NO_TURNS;
+  const [, , c2, c3, c4] = p;
   const slope = slopeOf(p);
   const edges = [0, ...quadraticRoots(2 * c2, 6 * c3, 12 * c4).filter((u) => u > 0 && u < 1), 1];
   const turns: number[] = [];

@@ -31,6 +31,7 @@ interface Piece {
   to: number;
   /** Profiles at the quarters of the piece, °C. */
   rows: Float64Array[];
+  steps: number;
 }
 
 interface StageFindings {
@@ -45,9 +46,9 @@ export class SlowestFinder {
   private readonly found: StageFindings[] = [];
   private stage = 0;
   private pieces: Piece[] = [];
-  /** Steps that the next piece is joined of, and those waiting to be joined. */
+  /** Steps that a piece is joined of. */
   private stepsAPiece = 1;
-  private waiting: Piece[] = [];
+  private readonly pool = new Pool();
 
   constructor(project: Pick<Project, 'part' | 'materials'>, points: FieldPoints, cycle: LaidCycle) {
     this.project = project;
@@ -59,17 +60,33 @@ export class SlowestFinder {
     if (step.stage !== this.stage) {
       this.found[this.stage] = this.evaluate();
       this.stage = step.stage;
+      this.pool.take(this.pieces);
       this.pieces = [];
-      this.waiting = [];
       this.stepsAPiece = 1;
     }
-    this.waiting.push({ from: step.from, to: step.to, rows: rows.map((row) => row.slice()) });
-    if (this.waiting.length < this.stepsAPiece) return;
-    this.pieces.push(join(this.waiting));
-    this.waiting = [];
-    if (this.pieces.length < PIECES) return;
-    this.pieces = Array.from({ length: PIECES / 2 }, (_, i) => join(this.pieces.slice(2 * i, 2 * i + 2)));
+    const { pieces } = this;
+    pieces.push({ from: step.from, to: step.to, rows: rows.map((row) => this.pool.copyOf(row)), steps: 1 });
+    while (pieces.length > 1 && pieces[pieces.length - 1].steps < this.stepsAPiece) {
+      const [before, last] = [pieces[pieces.length - 2], pieces[pieces.length - 1]];
+      if (before.steps !== last.steps) break;
+      pieces.length -= 2;
+      pieces.push(this.joined(before, last));
+    }
+    if (pieces.length < PIECES) return;
+    this.pieces = Array.from({ length: PIECES / 2 }, (_, i) => this.joined(pieces[2 * i], pieces[2 * i + 1]));
     this.stepsAPiece *= 2;
+  }
+
+  /** One piece in the place of two neighbours, whose rows are free again. */
+  private joined(a: Piece, b: Piece): Piece {
+    const [from, to] = [a.from, b.to];
+    const inner = [0.25, 0.5, 0.75].map((part) => {
+      const time = from + part * (to - from);
+      const piece = time <= a.to ? a : b;
+      return rowAt(piece, (time - piece.from) / (piece.to - piece.from), this.pool.row(a.rows[0].length));
+    });
+    for (let i = 0; i < 4; i++) this.pool.give(a.rows[i + 1], b.rows[i]);
+    return { from, to, rows: [a.rows[0], ...inner, b.rows[4]], steps: a.steps + b.steps };
   }
 
   /** One entry a stage; the stage in hand is taken up to now, those not begun are null. */
@@ -85,12 +102,11 @@ export class SlowestFinder {
   }
 
   private findings(): StageFindings[] {
-    const begun = this.pieces.length + this.waiting.length > 0;
-    return begun ? [...this.found, this.evaluate()] : this.found;
+    return this.pieces.length > 0 ? [...this.found, this.evaluate()] : this.found;
   }
 
   private evaluate(): StageFindings {
-    const pieces = this.waiting.length > 0 ? [...this.pieces, join(this.waiting)] : this.pieces;
+    const { pieces } = this;
     if (pieces.length === 0) return { slowest: null, heats: false };
     const start = pieces[0].rows[0];
     const end = pieces[pieces.length - 1].rows[4];
@@ -163,21 +179,46 @@ function lastOpen(pieces: readonly Piece[], point: number, end: number, open: nu
   return pieces[0].from;
 }
 
-/** One piece over the time of several: its quarters read off their quartics. */
-function join(pieces: readonly Piece[]): Piece {
-  if (pieces.length === 1) return pieces[0];
-  const [from, to] = [pieces[0].from, pieces[pieces.length - 1].to];
-  const inner = [0.25, 0.5, 0.75].map((part) => {
-    const time = from + part * (to - from);
-    const piece = pieces.find((candidate) => time <= candidate.to) ?? pieces[pieces.length - 1];
-    return rowAt(piece, (time - piece.from) / (piece.to - piece.from));
-  });
-  return { from, to, rows: [pieces[0].rows[0], ...inner, pieces[pieces.length - 1].rows[4]] };
+/** Fractions of a piece closer to a quarter than this are that quarter. */
+const SAME_QUARTER = 1e-9;
+
+/** A piece's profile at u, by Lagrange's quartic through its quarters. */
+function rowAt({ rows }: Piece, u: number, out: Float64Array): Float64Array {
+  const quarter = Math.round(4 * u);
+  if (Math.abs(4 * u - quarter) < SAME_QUARTER) {
+    out.set(rows[quarter]);
+    return out;
+  }
+  const [w0, w1, w2, w3, w4] = quarterWeights(u);
+  const [r0, r1, r2, r3, r4] = rows;
+  for (let i = 0; i < out.length; i++) out[i] = w0 * r0[i] + w1 * r1[i] + w2 * r2[i] + w3 * r3[i] + w4 * r4[i];
+  return out;
 }
 
-/** A piece's profile at u: the weights of Lagrange's quartic through its quarters. */
-function rowAt({ rows }: Piece, u: number): Float64Array {
+function quarterWeights(u: number): number[] {
   const nodes = [0, 0.25, 0.5, 0.75, 1];
-  const weights = nodes.map((node) => nodes.reduce((w, other) => (other === node ? w : (w * (u - other)) / (node - other)), 1));
-  return rows[0].map((_, i) => weights.reduce((sum, weight, k) => sum + weight * rows[k][i], 0));
+  return nodes.map((node) => nodes.reduce((w, other) => (other === node ? w : (w * (u - other)) / (node - other)), 1));
+}
+
+/** Rows used again: a run of a million steps would otherwise make five million. */
+class Pool {
+  private readonly free: Float64Array[] = [];
+
+  row(length: number): Float64Array {
+    return this.free.pop() ?? new Float64Array(length);
+  }
+
+  copyOf(row: Float64Array): Float64Array {
+    const copy = this.row(row.length);
+    copy.set(row);
+    return copy;
+  }
+
+  give(...rows: Float64Array[]): void {
+    this.free.push(...rows);
+  }
+
+  take(pieces: readonly Piece[]): void {
+    for (const { rows } of pieces) this.give(...rows);
+  }
 }

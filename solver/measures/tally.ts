@@ -50,30 +50,28 @@ export class Tally {
       value,
       position: placeAt(fraction),
     });
-    this.extend(course.holds(this.condition, looked), quarters, (fraction) => momentAt(fraction, course.at(fraction)));
-    const better = (than: Moment | null, value: number) => than === null || this.margin(value) > this.margin(than.value);
-    for (const { fraction, value } of course.samplesIn(looked)) {
-      if (better(this.bestEver, value)) this.bestEver = momentAt(fraction, value);
+    for (const { from, to } of course.holds(this.condition, looked)) {
+      const last = this.holds.at(-1);
+      if (last !== undefined && quarters.time(from) <= last.to + this.slack) last.to = quarters.time(to);
+      else this.holds.push({ begin: momentAt(from, course.at(from)), to: quarters.time(to) });
     }
-    const counted = this.clip(counts, quarters);
+    for (const { fraction, value } of course.samplesIn(looked)) {
+      if (this.isBetter(value, this.bestEver)) this.bestEver = momentAt(fraction, value);
+    }
+    const counted = look === counts ? looked : this.clip(counts, quarters);
     if (counted === null) return;
     for (const { fraction, value } of course.samplesIn(counted)) {
-      if (better(this.best, value)) this.best = momentAt(fraction, value);
+      if (this.isBetter(value, this.best)) this.best = momentAt(fraction, value);
       if (this.worst === null || this.margin(value) < this.margin(this.worst.value)) this.worst = momentAt(fraction, value);
     }
   }
 
-  margin(value: number): number {
-    return beyond(this.condition, value);
+  private isBetter(value: number, than: Moment | null): boolean {
+    return than === null || this.margin(value) > this.margin(than.value);
   }
 
-  private extend(stretches: readonly Stretch[], quarters: Quarters, momentAt: (fraction: number) => Moment): void {
-    for (const { from, to } of stretches) {
-      const last = this.holds.at(-1);
-      const begin = quarters.time(from);
-      if (last !== undefined && begin <= last.to + this.slack) last.to = quarters.time(to);
-      else this.holds.push({ begin: momentAt(from), to: quarters.time(to) });
-    }
+  margin(value: number): number {
+    return beyond(this.condition, value);
   }
 
   /**
