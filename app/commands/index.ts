@@ -1,6 +1,6 @@
 /** Doors of the commands: pure edits of a plan, a file for each part of the document. */
 export { applyCommand, called, together, type Command, type Entered } from './command';
-export { typedAt } from './typed';
+export { parsePlace, typedAt } from './typed';
 export { indexOfId } from './edit';
 export { setNotes, setTitle } from './document';
 export {
@@ -81,4 +81,5 @@ export {
   startRequirement,
   type RequirementStart,
 } from './requirements';
-export { SCHEME_NAMES, setAccuracy, setDampedSteps, setGrid, setScheme, setStep } from './settings';
+export { moveEdge, placeNear, pullSegment, pullSetPoint, type Pull } from './dragging';
+export { SCHEME_NAMES, setAccuracy, setDampedSteps, setGrid, setLayerCount, setScheme, setStep } from './settings';

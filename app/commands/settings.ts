@@ -1,7 +1,7 @@
 /** Edits of how a plan is solved. */
 import type { GridSetting, SchemeName } from '../../solver/model';
-import type { Command, Entered } from './command';
-import { enterAt, writeAt } from './edit';
+import { called, type Command, type Entered } from './command';
+import { enterAt, indexOfId, writeAt } from './edit';
 
 export const SCHEME_NAMES: Record<SchemeName, string> = {
   automatic: 'automatic',
@@ -39,4 +39,19 @@ export const setDampedSteps = (count: number): Command => ({
 export const setGrid = (grid: GridSetting, text: string): Command => ({
   name: `Grid to ${text}`,
   apply: (project) => writeAt(project, ['settings', 'grid'], grid),
+});
+
+/** Another count of nodes or cells in one layer; an automatic grid has none. */
+export const setLayerCount = (layer: { id: string; name: string }, count: number): Command => ({
+  name: `Grid of ${called(layer, 'layer')} to ${count}`,
+  apply: (project) => {
+    const { grid } = project.settings;
+    const index = indexOfId(project.part.layers, layer.id);
+    if (grid === 'automatic' || index < 0) return project;
+    const key = 'nodes' in grid ? 'nodes' : 'cells';
+    const counts = 'nodes' in grid ? grid.nodes : grid.cells;
+    const each = Array.isArray(counts) ? [...counts] : project.part.layers.map(() => counts);
+    each[index] = count;
+    return writeAt(project, ['settings', 'grid'], { [key]: each });
+  },
 });

@@ -2,7 +2,7 @@
 import { placeOf, valueAt, type Path, type Project } from '../../solver/model';
 
 /** The path that `placeOf` words: "part.layers[1].thickness" → ['part', 'layers', 1, 'thickness']. */
-export const pathOf = (place: string): Path =>
+export const parsePlace = (place: string): Path =>
   [...place.matchAll(/([^.[\]]+)|\[(\d+)\]/g)].map((part) => (part[2] === undefined ? part[1] : Number(part[2])));
 
 /**
@@ -13,7 +13,7 @@ export function keepTyped(before: Project, after: Project): Project {
   const { typed, ...rest } = after;
   if (typed === undefined) return after;
   const kept = Object.entries(typed).filter(([place, text]) => {
-    const path = pathOf(place);
+    const path = parsePlace(place);
     const number = valueAt(after, path);
     if (typeof number !== 'number') return false;
     return before.typed?.[place] !== text || valueAt(before, path) === number;

@@ -7,7 +7,7 @@ import { onMedia, readPreferences, writePreferences } from './preferences';
 export type Theme = 'system' | 'light' | 'dark' | 'contrast';
 
 /** Tables of the sheet that can be closed to their heads. */
-export type TableName = 'part' | 'materials' | 'probes' | 'exposure' | 'cycle' | 'requirements' | 'solver';
+export type TableName = 'part' | 'materials' | 'probes' | 'exposure' | 'cycle' | 'requirements' | 'solver' | 'notes';
 
 /** A place in the sheet to be shown and focused; `serial` makes a second wish for the same place a new one. */
 export interface FocusWish {
@@ -45,6 +45,7 @@ export const useViewStore = defineStore('view', () => {
     cycle: false,
     requirements: true,
     solver: false,
+    notes: false,
   };
   /** A short window closes the requirements to their summary: their verdicts stand in the strip above. */
   const isOpen = (name: TableName): boolean =>

@@ -1,0 +1,2 @@
+/** Doors of solving: how the plan is solved, as a section of the sheet. */
+export { default as SolverSettings } from './SolverSettings.vue';

@@ -1,0 +1,45 @@
+/** A plan as a small drawing: its layers to scale, its set-point over time, and the limits of its requirements. */
+import { extent, layLayers, linearScale, linePath } from '../draw';
+import { layCycle, type Project } from '../../solver/model';
+import { tintOf } from '../ui';
+
+export interface CardDrawing {
+  layers: { x: number; width: number; tint: string }[];
+  setPoint: string;
+  /** Heights of the temperature limits. */
+  limits: number[];
+  duration_s: number;
+}
+
+/** The drawing's frame, px: the part at the left, the course at the right. */
+export const PART = { left: 14, right: 96, top: 14, bottom: 92 } as const;
+export const COURSE = { left: 124, right: 262, top: 14, bottom: 92 } as const;
+const LEAST_LAYER = 2;
+
+export function drawCard(project: Project): CardDrawing {
+  const { layers } = project.part;
+  const row = layLayers(
+    layers.map((layer) => layer.thickness),
+    PART.left,
+    PART.right,
+    LEAST_LAYER,
+  );
+  const laid = layCycle(project);
+  const limits = project.requirements.filter(({ of }) => !('difference' in of)).map(({ must }) => must.limit);
+  const [low, high] = extent([laid.setPoint.value, limits]) ?? [0, 1];
+  const time = linearScale(0, laid.end, COURSE.left, COURSE.right);
+  const value = linearScale(low, high > low ? high : low + 1, COURSE.bottom - 4, COURSE.top + 4);
+  return {
+    layers: layers.map((layer, index) => ({
+      x: row.edges[index],
+      width: row.edges[index + 1] - row.edges[index],
+      tint: tintOf(project, layer.material),
+    })),
+    setPoint: linePath(
+      laid.setPoint.time.map((at) => time.at(at)),
+      laid.setPoint.value.map((at) => value.at(at)),
+    ),
+    limits: limits.map((limit) => value.at(limit)),
+    duration_s: laid.end,
+  };
+}
