@@ -20,7 +20,10 @@ export interface Solved {
   run: Run;
 }
 
-/** Runs a plan to its end and keeps what was asked for. Throws where the plan or the run fails. */
+/** Most that the heat stored may differ from the heat that came in, in parts of all heat exchanged. */
+const CLOSURE = 1e-9;
+
+/** Runs a plan to its end and keeps what was asked for. Throws where the plan or the run fails, or heat is lost on the way. */
 export function solved(project: Project, times: number[]): Solved {
   const checked = checkProject(project);
   if (checked.kind !== 'project') throw new Error(`the plan has a problem: ${JSON.stringify(checked)}`);
@@ -41,7 +44,9 @@ export function solved(project: Project, times: number[]): Solved {
   const outcome = toTheEnd(run);
   if (outcome.reason !== 'finished') throw new Error(`the run ended with ${outcome.reason}: ${outcome.message}`);
   if (next < order.length) throw new Error(`the cycle ends before ${times[order[next]]} s`);
-  return { profiles: fields.map((field) => profileOf(run.points, field)), flux, energy: run.energy(), run };
+  const energy = run.energy();
+  if (!(energy.closure <= CLOSURE)) throw new Error(`heat is not kept: closure ${energy.closure}`);
+  return { profiles: fields.map((field) => profileOf(run.points, field)), flux, energy, run };
 }
 
 /** Takes steps until the run says how it ended. */
