@@ -56,12 +56,14 @@ export function gradedLengths(demand: GridDemand): Float64Array[] {
     const [left, right] = [edges[index], edges[index + 1]];
     const leftIsEdge = index > 0 || sharpness.start === null;
     const rightIsEdge = index < layers.length - 1 || sharpness.end === null;
+    const byPlaces = (sigma: number): number =>
+      places.reduce((least, { at, first }) => Math.min(least, first + growth * Math.abs(sigma - at)), growth * whole);
+    const atLeft = leftIsEdge ? EDGE_PART * byPlaces(left) : Infinity;
+    const atRight = rightIsEdge ? EDGE_PART * byPlaces(right) : Infinity;
+    const backFromEdge = growth / 2 + 0.25;
     const spacing = (sigma: number): number => {
-      let wanted = growth * whole;
-      for (const place of places) wanted = Math.min(wanted, place.first + growth * Math.abs(sigma - place.at));
-      const edge = Math.min(leftIsEdge ? sigma - left : Infinity, rightIsEdge ? right - sigma : Infinity);
-      if (edge < Infinity) wanted = Math.min(wanted, EDGE_PART * wanted + (growth / 2 + 0.25) * edge);
-      return Math.max(wanted, SMALLEST_SPACING * whole);
+      const byEdges = Math.min(atLeft + backFromEdge * (sigma - left), atRight + backFromEdge * (right - sigma));
+      return Math.max(Math.min(byPlaces(sigma), byEdges), SMALLEST_SPACING * whole);
     };
     return placeElements(layer.thickness, left, right, spacing);
   });

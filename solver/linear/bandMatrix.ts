@@ -96,13 +96,14 @@ export class BandMatrix {
     for (let i = 0; i < size - 1; i++) {
       const right = x[i + 1];
       let value = lower[i] * left + diagonal[i] * here + upper[i] * right;
-      if (farLower[i] !== 0) value += farLower[i] * x[i - 2];
-      if (farUpper[i] !== 0) value += farUpper[i] * x[i + 2];
+      if (farLower[i] !== 0 && i > 1) value += farLower[i] * x[i - 2];
+      if (farUpper[i] !== 0 && i < size - 2) value += farUpper[i] * x[i + 2];
       out[i] = value;
       left = here;
       here = right;
     }
     const last = size - 1;
-    out[last] = lower[last] * left + diagonal[last] * here + (farLower[last] !== 0 ? farLower[last] * x[last - 2] : 0);
+    out[last] = lower[last] * left + diagonal[last] * here;
+    if (last > 1) out[last] += farLower[last] * x[last - 2];
   }
 }
