@@ -29,16 +29,19 @@ export class Audit {
       this.exchanged += Math.abs(through[heat] - this.counted[heat]);
       this.counted[heat] = through[heat];
     }
-    if (!this.system.linear) this.noteLag(time);
+    if (!this.system.linear) this.largestLag = this.lagUpTo(time);
   }
 
-  private noteLag(time: number): void {
+  /** The largest lag noted so far or found at `time`. Looking changes nothing: how often a run was asked leaves no trace in it. */
+  private lagUpTo(time: number): number {
     const { system, state } = this;
+    let largest = this.largestLag;
     system.evaluate(state.unknowns, time);
     for (let row = 0; row < system.size; row++) {
       const lag = Math.abs((state.stored[row] - system.storage[row]) / system.rowCapacity[row]);
-      if (lag > this.largestLag) this.largestLag = lag;
+      if (lag > largest) largest = lag;
     }
+    return largest;
   }
 
   /**
@@ -46,10 +49,9 @@ export class Audit {
    * steps, so that a cycle that gives back what it took has one too; 0 if nothing was exchanged. `lag` in K, the largest so far.
    */
   figures(time: number): { stored: number; through: Float64Array; closure: number; lag: number } {
-    this.noteLag(time);
     const { state, exchanged } = this;
     const stored = sumOf(state.stored) - this.storedAtStart;
     const closure = exchanged > 0 ? Math.abs(stored - sumOf(state.through)) / exchanged : 0;
-    return { stored, through: Float64Array.from(state.through), closure, lag: this.largestLag };
+    return { stored, through: Float64Array.from(state.through), closure, lag: this.lagUpTo(time) };
   }
 }
