@@ -72,7 +72,7 @@ async function writeTables(
   return null;
 }
 
-/** Prints the verdicts; 1 where a requirement is not met or cannot be judged. A thin margin passes, with a remark. */
+/** Prints the verdicts, and sums them up; 1 where a requirement is not met or cannot be judged. */
 export async function check(file: string, { quiet }: { quiet: boolean }, io: Io): Promise<ExitCode> {
   const ran = await runFile(file, quiet, io);
   if (typeof ran === 'number') return ran;
@@ -81,10 +81,14 @@ export async function check(file: string, { quiet }: { quiet: boolean }, io: Io)
   if (result.outcome.reached_s > 0) io.print(`${report.title}\n${answersTable(project, report, paintFor(io))}`);
   const ended = exitOf(result.outcome, file, io);
   if (ended !== EXIT.done) return ended;
+  return sumUp(report, quiet, io);
+}
+
+/** Says how many requirements are met; 1 unless all are. A thin margin passes, with a remark. */
+export function sumUp(report: Report, quiet: boolean, io: Pick<Io, 'print' | 'remark'>): ExitCode {
   io.print(`${summaryOf(report)}\n`);
-  const thin = report.answers.filter(({ verdict }) => verdict === 'thin');
-  if (!quiet)
-    for (const { name } of thin) io.remark(`"${name}" is met with a thin margin: the limit lies within its uncertainty.\n`);
+  const thin = quiet ? [] : report.answers.filter(({ verdict }) => verdict === 'thin');
+  for (const { name } of thin) io.remark(`"${name}" is met with a thin margin: the limit lies within its uncertainty.\n`);
   return report.answers.every(({ verdict }) => passes(verdict)) ? EXIT.done : EXIT.requirementFailed;
 }
 

@@ -1,6 +1,16 @@
 import { describe, expect, it } from 'vitest';
 import { EXIT, EXIT_MEANINGS } from '../../../main/cli';
-import { CAUTION, newProject, reportSchema, writeProject, type Project } from '../../../solver/model';
+import { sumUp } from '../../../main/cli/commands';
+import {
+  CAUTION,
+  buildReport,
+  newProject,
+  reportSchema,
+  writeProject,
+  type Project,
+  type Report,
+  type Verdict,
+} from '../../../solver/model';
 import { solve } from '../../../solver/planning';
 import { command, sampleText, systemError, type Ended } from './fakeIo';
 
@@ -276,6 +286,43 @@ describe('check', () => {
     const world = { files: { a: endless }, terminal: true, onRemark: interrupt };
     expect((await command(['check', 'a'], world)).code).toBe(130);
   });
+});
+
+describe('the sum of a check', () => {
+  const reportOf = (...verdicts: Verdict[]): Report => {
+    const report = buildReport(newProject(), solve(newProject()));
+    const answer = { name: 'Warm' } as Report['answers'][number];
+    return { ...report, answers: verdicts.map((verdict) => ({ ...answer, verdict })) };
+  };
+  const sum = (quiet: boolean, ...verdicts: Verdict[]) => {
+    let [out, err] = ['', ''];
+    const io = { print: (text: string) => void (out += text), remark: (text: string) => void (err += text) };
+    return { code: sumUp(reportOf(...verdicts), quiet, io), out, err };
+  };
+
+  it.each<[Verdict, number]>([
+    ['met', 0],
+    ['thin', 0],
+    ['not-met', 1],
+    ['never-reached', 1],
+    ['cannot-be-judged', 1],
+  ])('a requirement that is %s gives %d', (verdict, code) => expect(sum(false, 'met', verdict).code).toBe(code));
+
+  it('remarks on a thin margin, unless it is to be quiet', () => {
+    expect(sum(false, 'thin')).toEqual({
+      code: 0,
+      out: 'The requirement is met.\n',
+      err: '"Warm" is met with a thin margin: the limit lies within its uncertainty.\n',
+    });
+    expect(sum(true, 'thin').err).toBe('');
+  });
+
+  it.each<[string, Verdict[]]>([
+    ['Nothing to check.', []],
+    ['All 2 requirements are met.', ['met', 'thin']],
+    ['1 of 2 requirements is met.', ['met', 'not-met']],
+    ['0 of 1 requirements are met.', ['never-reached']],
+  ])('says "%s"', (words, verdicts) => expect(sum(true, ...verdicts).out).toBe(`${words}\n`));
 });
 
 describe('validate', () => {
