@@ -29,6 +29,7 @@ export default defineConfig({
     assetsInlineLimit: 0, // the policy allows no data: fonts
     modulePreload: { polyfill: false },
     reportCompressedSize: false,
+    chunkSizeWarningLimit: 2000,
     rolldownOptions: { input: here('app/index.html') },
   },
   worker: {

@@ -24,9 +24,9 @@ const SHORTEST_OF_CYCLE = 1e-4;
 const SHORTEST_OF_STAGE = 1e-2;
 /** No spacing is below this part of the whole; it keeps absurd plans from asking for endless grids. */
 const SMALLEST_SPACING = 1e-9;
-/** A first element this many times longer than a jump asks for gets plain storage, in so many rows. */
+/** An element this many times longer than a front at its place gets plain storage, in so many rows. */
 const UNRESOLVED = 4;
-const PLAIN_ROWS = 3;
+const PLAIN_ROWS = 5;
 
 /** What the grid of a wall follows from. */
 export interface GridDemand {
@@ -82,37 +82,28 @@ export function equalCounts({ layers, accuracy, range }: GridDemand): number[] {
 }
 
 /**
- * Where storage of fourth order would do harm: it answers a jump that is finer than the first element with a swing of a tenth
- * of it to the other side, at the next node and for as long as the jump stays that fine. Plain rows do not. They are few and
- * next to the jump, so the order in space is kept.
+ * Where storage of fourth order would do harm: it answers a front that is finer than an element with a swing of a tenth of it to
+ * the other side, at the next node and for as long as the front stays that fine. Plain rows do not. Fronts start at jumps and
+ * widen with the distance from them, so they are too fine at edges of layers if anywhere; a few rows there keep the order in space.
  */
 export function plainRowsOf(demand: GridDemand, lengths: readonly Float64Array[]): PlainRows[] {
-  const { layers, accuracy, sharpness } = demand;
-  const plain = layers.map(() => ({ start: 0, end: 0 }));
-  const last = layers.length - 1;
-  const unresolved = (face: 'start' | 'end', index: number, length: number): boolean => {
-    const sharp = sharpness[face];
-    return (
-      sharp !== null && length / Math.sqrt(diffusivity(layers[index])) > UNRESOLVED * jumpSpacing(layers[index], sharp, accuracy)
-    );
+  const { layers, accuracy, range } = demand;
+  const growth = spacingGrowth(accuracy, range, 4);
+  const edges = layerEdges(layers);
+  const jumps = jumpPlaces(demand, edges);
+  const rowsAt = (edge: number, length: number, layer: WallLayer): number => {
+    const front = jumps.reduce((least, { at, first }) => Math.min(least, first + growth * Math.abs(edge - at)), Infinity);
+    return length / Math.sqrt(diffusivity(layer)) > UNRESOLVED * front ? PLAIN_ROWS : 0;
   };
-  if (unresolved('start', 0, lengths[0][0])) plain[0].start = PLAIN_ROWS;
-  if (unresolved('end', last, lengths[last][lengths[last].length - 1])) plain[last].end = PLAIN_ROWS;
-  for (let i = 1; i < layers.length; i++) {
-    if (!meetUnequal(layers, i, accuracy)) continue;
-    plain[i - 1].end = PLAIN_ROWS;
-    plain[i].start = PLAIN_ROWS;
-  }
-  return plain;
+  return layers.map((layer, i) => ({
+    start: rowsAt(edges[i], lengths[i][0], layer),
+    end: rowsAt(edges[i + 1], lengths[i][lengths[i].length - 1], layer),
+  }));
 }
-
-/** Whether layer i and the one before start at different temperatures, and so act on each other like a jump. */
-const meetUnequal = (layers: readonly WallLayer[], i: number, accuracy: number): boolean =>
-  Math.abs(layers[i].initial - layers[i - 1].initial) > accuracy;
 
 function spacingGrowth(accuracy: number, range: TemperatureRange, order: 2 | 4): number {
   const epsilon = (0.5 * accuracy) / Math.max(range.highest - range.lowest, accuracy);
-  return Math.min(LARGEST_GROWTH, order === 4 ? 1.6 * epsilon ** 0.25 : 2 * Math.sqrt(epsilon));
+  return Math.min(LARGEST_GROWTH, order === 4 ? 1.6 * Math.sqrt(Math.sqrt(epsilon)) : 2 * Math.sqrt(epsilon));
 }
 
 const diffusivity = ({ curves, initial }: WallLayer): number => curves.conductivity(initial) / curves.heatCapacity(initial);
@@ -124,21 +115,30 @@ function layerEdges(layers: readonly WallLayer[]): number[] {
   return edges;
 }
 
-function sharpPlaces({ layers, cycle, accuracy, sharpness }: GridDemand, edges: readonly number[], growth: number): SharpPlace[] {
-  const shortestStage = Math.min(...cycle.stages.map((stage) => stage.end - stage.start));
-  const smallest = 0.5 * growth * Math.sqrt(Math.min(SHORTEST_OF_CYCLE * cycle.end, SHORTEST_OF_STAGE * shortestStage));
+/** Jumps, with the first spacings that resolve them: of the exposures, and of layers that start at different temperatures. */
+function jumpPlaces({ layers, accuracy, sharpness }: GridDemand, edges: readonly number[]): SharpPlace[] {
+  const { start, end } = sharpness;
+  const last = layers.length - 1;
   const places: SharpPlace[] = [];
-  const addFace = (sharp: Sharpness | null, layer: WallLayer, at: number): void => {
-    if (sharp === null) return;
-    const first = Math.min(jumpSpacing(layer, sharp, accuracy), rampSpacing(layer, sharp, accuracy));
-    places.push({ at, first: Math.max(first, smallest) });
-  };
-  addFace(sharpness.start, layers[0], 0);
-  addFace(sharpness.end, layers[layers.length - 1], edges[layers.length]);
-  for (let i = 1; i < layers.length; i++) {
-    if (meetUnequal(layers, i, accuracy)) places.push({ at: edges[i], first: smallest });
+  if (start !== null) places.push({ at: 0, first: jumpSpacing(layers[0], start, accuracy) });
+  if (end !== null) places.push({ at: edges[last + 1], first: jumpSpacing(layers[last], end, accuracy) });
+  for (let i = 1; i <= last; i++) {
+    if (Math.abs(layers[i].initial - layers[i - 1].initial) > accuracy) places.push({ at: edges[i], first: 0 });
   }
   return places;
+}
+
+/** All that makes a profile sharp, with first spacings that resolve it from the shortest time of interest on. */
+function sharpPlaces(demand: GridDemand, edges: readonly number[], growth: number): SharpPlace[] {
+  const { layers, cycle, accuracy, sharpness } = demand;
+  const { start, end } = sharpness;
+  const last = layers.length - 1;
+  const places = jumpPlaces(demand, edges);
+  if (start !== null) places.push({ at: 0, first: rampSpacing(layers[0], start, accuracy) });
+  if (end !== null) places.push({ at: edges[last + 1], first: rampSpacing(layers[last], end, accuracy) });
+  const shortestStage = Math.min(...cycle.stages.map((stage) => stage.end - stage.start));
+  const smallest = 0.5 * growth * Math.sqrt(Math.min(SHORTEST_OF_CYCLE * cycle.end, SHORTEST_OF_STAGE * shortestStage));
+  return places.map(({ at, first }) => ({ at, first: Math.max(first, smallest) }));
 }
 
 /** Part of the accuracy that the first moments after a jump, or at the start of a ramp, may cost. */
@@ -156,7 +156,8 @@ function rampSpacing(layer: WallLayer, { fluxRate, temperatureRate }: Sharpness,
   const alpha = diffusivity(layer);
   const part = FIRST_PART * accuracy * alpha;
   let first = Infinity;
-  if (fluxRate > 0) first = Math.min(first, Math.cbrt((part * layer.curves.conductivity(layer.initial)) / fluxRate));
+  // Single precision: engines differ in the last digits of a cube root, and a plan has the same digits on all of them.
+  if (fluxRate > 0) first = Math.min(first, Math.fround(Math.cbrt((part * layer.curves.conductivity(layer.initial)) / fluxRate)));
   if (temperatureRate > 0) first = Math.min(first, Math.sqrt(part / temperatureRate));
   return first / Math.sqrt(alpha);
 }

@@ -54,7 +54,8 @@ export class StepController {
   }
 
   private factor(error: number): number {
-    return SAFETY * Math.max(error, SMALLEST_ERROR) ** this.exponent;
+    // Single precision: engines differ in the last digits of a power, and a plan has the same digits on all of them.
+    return Math.fround(SAFETY * Math.max(error, SMALLEST_ERROR) ** this.exponent);
   }
 
   /** The step wanted next, however much is left, s. */

@@ -2,16 +2,9 @@ import { mkdtemp, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import type { DesktopApi, SaveRequest } from '../../../main/desktop/contract';
+import type { SaveRequest } from '../../../main/desktop/contract';
 import { tryForbidden } from '../support/forbidden';
 import { launchElectron, type LaunchedElectron } from '../support/hosts';
-
-/** The page's side of the bridge, for code that runs in the page. */
-declare global {
-  interface Window {
-    soakwright: DesktopApi;
-  }
-}
 
 let host: LaunchedElectron;
 beforeAll(async () => {
