@@ -88,6 +88,26 @@ export class Course {
     return last === undefined ? [first] : [first, ...inside, last];
   }
 
+  /** Whether it only rises or only falls. */
+  get monotone(): boolean {
+    const steps = this.samples().map(({ value }, i, all) => (i === 0 ? 0 : value - all[i - 1].value));
+    return steps.every((step) => step >= 0) || steps.every((step) => step <= 0);
+  }
+
+  /**
+   * Two values that it surely stays between: twice the range of its values at the eighths beyond them (a quartic stays within
+   * 0.61 of its range at the quarters).
+   */
+  bounds(): [low: number, high: number] {
+    let [low, high] = [Infinity, -Infinity];
+    for (let eighth = 0; eighth <= 8; eighth++) {
+      const value = this.at(eighth / 8);
+      if (value < low) low = value;
+      if (value > high) high = value;
+    }
+    return [low - 2 * (high - low), high + 2 * (high - low)];
+  }
+
   /** The stretches of `within` in which the condition holds, in order; a touch is one of no length. */
   holds(condition: Condition, within: Stretch): Stretch[] {
     const samples = this.samplesIn(within);

@@ -12,7 +12,7 @@ import type { FieldPoints } from '../stepping';
 import { Course, type Piece } from './course';
 import { differenceInPiece, ExtremesReader, newExtremes, type Extremes } from './extremes';
 import type { Quarters } from './quarters';
-import { quarticThrough, valueOf } from './quartic';
+import { quarticThrough, valueOf, type Polynomial } from './quartic';
 
 /** What the courses of a field are of. */
 export type FieldQuantity = 'coldest' | 'hottest' | 'part' | 'material';
@@ -38,6 +38,7 @@ export class FieldOverStep {
   /** Extremes between the quarters, as far as they were asked for, by fraction. */
   private readonly between = new Map<number, Extremes>();
   private readonly courses = new Map<FieldQuantity, Course>();
+  private readonly roughs = new Map<FieldQuantity, Course>();
   private quarters!: Quarters;
 
   /** `tolerance`: how far a course may lie from the dense output where an extreme moves on, K. */
@@ -51,6 +52,7 @@ export class FieldOverStep {
     this.quarters = quarters;
     this.between.clear();
     this.courses.clear();
+    this.roughs.clear();
     for (let i = 0; i < 5; i++) this.reader.read(quarters.rows[i], this.atQuarters[i]);
   }
 
@@ -61,6 +63,26 @@ export class FieldOverStep {
       this.courses.set(quantity, course);
     }
     return course;
+  }
+
+  /** A course without a search for kinks: through the quarters, and the eighths unless all points move along straight lines. */
+  rough(quantity: FieldQuantity): Course {
+    let rough = this.roughs.get(quantity);
+    if (rough === undefined) {
+      rough = new Course(this.roughPieces(quantity));
+      this.roughs.set(quantity, rough);
+    }
+    return rough;
+  }
+
+  private roughPieces(quantity: FieldQuantity): Piece[] {
+    const [k0, k1, k2, k3, k4] = this.atQuarters;
+    if (this.quarters.straight) return [{ from: 0, to: 1, shape: shapeOf(quantity, this.atQuarters) }];
+    const [e1, e3, e5, e7] = EIGHTHS.map((fraction) => this.extremesAt(fraction));
+    return [
+      { from: 0, to: 0.5, shape: shapeOf(quantity, [k0, e1, k1, e3, k2]) },
+      { from: 0.5, to: 1, shape: shapeOf(quantity, [k2, e5, k3, e7, k4]) },
+    ];
   }
 
   /** Extremes of the field at a fraction of the step; not to be changed. */
@@ -87,7 +109,7 @@ export class FieldOverStep {
   private pieces(quantity: FieldQuantity, from: number, to: number, known: readonly Extremes[], depth: number): Piece[] {
     const figure = figureOf[quantity];
     const [k0, k1, k2, k3, k4] = known;
-    const shape = quarticThrough(figure(k0), figure(k1), figure(k2), figure(k3), figure(k4));
+    const shape = shapeOf(quantity, known);
     if (depth === DEEPEST || (this.quarters.straight && stayBeside(known, PLACES[quantity]))) return [{ from, to, shape }];
     const between = EIGHTHS.map((part) => this.extremesAt(from + part * (to - from)));
     const fits = between.every((extremes, i) => Math.abs(figure(extremes) - valueOf(shape, EIGHTHS[i])) <= this.tolerance);
@@ -98,6 +120,11 @@ export class FieldOverStep {
       ...this.pieces(quantity, middle, to, [k2, between[2], k3, between[3], k4], depth + 1),
     ];
   }
+}
+
+function shapeOf(quantity: FieldQuantity, [k0, k1, k2, k3, k4]: readonly Extremes[]): Polynomial {
+  const figure = figureOf[quantity];
+  return quarticThrough(figure(k0), figure(k1), figure(k2), figure(k3), figure(k4));
 }
 
 function stayBeside(known: readonly Extremes[], places: readonly number[]): boolean {

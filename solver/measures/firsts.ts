@@ -58,9 +58,11 @@ export class Firsts {
 
 /** The fraction at which a quantity is highest in the step, if it is above `best` there; null otherwise. */
 function highest(field: FieldOverStep, quantity: FieldQuantity, best: number): number | null {
+  const rough = field.rough(quantity);
+  if (rough.bounds()[1] <= best) return null;
   let fraction: number | null = null;
   let top = best;
-  for (const sample of field.course(quantity).samples()) {
+  for (const sample of (rough.monotone ? rough : field.course(quantity)).samples()) {
     if (sample.value > top) {
       top = sample.value;
       fraction = sample.fraction;

@@ -10,7 +10,7 @@ import { FieldRecorder, Instants, ProbeReading, ProbeRecorder } from './historie
 import { conditionOf, judge } from './judge';
 import { Quarters } from './quarters';
 import { SlowestFinder } from './slowest';
-import { Tally } from './tally';
+import { Tally, type Subject } from './tally';
 import { layWindow } from './windows';
 
 /** What measures contribute to the result of a run. */
@@ -24,7 +24,7 @@ export interface Measures {
 }
 
 /** Where an extreme moves on inside a step, courses of the field follow it to this part of the wanted accuracy. */
-const COURSE_SHARE = 1e-3;
+const COURSE_SHARE = 1e-2;
 
 /** Measures of a run of a checked project. */
 export function createMeasures(project: Project, { points, cycle, start }: Pick<Run, 'points' | 'cycle' | 'start'>): Measures {
@@ -40,8 +40,7 @@ export function createMeasures(project: Project, { points, cycle, start }: Pick<
   const watched = project.requirements.map((requirement) => ({
     requirement,
     tally: new Tally(conditionOf(requirement.must), layWindow(requirement, cycle), cycle.end),
-    course: courseOf(requirement),
-    placeAt: placeOf(requirement),
+    subject: subjectOf(requirement),
   }));
   let reached = 0;
 
@@ -57,21 +56,22 @@ export function createMeasures(project: Project, { points, cycle, start }: Pick<
     firsts.observe(quarters, field);
     slowest.observe(quarters);
     frames.observe(quarters);
-    watched.forEach(({ tally, course, placeAt }) => tally.observe(quarters, course(), placeAt));
+    for (const { tally, subject } of watched) tally.observe(quarters, subject);
     reached = step.to;
   }
 
-  /** What gives the course of a requirement's subject over the step in hand. */
-  function courseOf({ of }: Requirement): () => Course {
-    if ('point' in of) return () => field.course(of.point);
-    if ('difference' in of) return () => field.course(of.difference);
-    const index = project.probes.findIndex(({ id }) => id === of.probe);
-    return () => probeCourses[index];
-  }
-
-  function placeOf({ of }: Requirement): (fraction: number) => number | null {
-    if (!('point' in of)) return () => null;
-    return (fraction) => field.extremesAt(fraction)[of.point].position;
+  function subjectOf({ of }: Requirement): Subject {
+    if ('probe' in of) {
+      const index = project.probes.findIndex(({ id }) => id === of.probe);
+      const course = () => probeCourses[index];
+      return { course, rough: course, placeAt: () => null };
+    }
+    const quantity = 'point' in of ? of.point : of.difference;
+    return {
+      course: () => field.course(quantity),
+      rough: () => field.rough(quantity),
+      placeAt: (fraction) => ('point' in of ? field.extremesAt(fraction)[of.point].position : null),
+    };
   }
 
   return {

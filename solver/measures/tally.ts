@@ -20,6 +20,15 @@ export interface Hold {
 /** Times closer than this part of the cycle are one. */
 export const SAME_TIME = 1e-12;
 
+/** What a requirement speaks of, over the step in hand. */
+export interface Subject {
+  /** The course, and a cheaper one: exact at the eighths of the step and, where the course has no kinks, everywhere. */
+  course(): Course;
+  rough(): Course;
+  /** Its place at a fraction of the step, m; null where it has none to tell. */
+  placeAt(fraction: number): number | null;
+}
+
 export class Tally {
   readonly condition: Condition;
   readonly window: LaidWindow;
@@ -39,16 +48,18 @@ export class Tally {
     this.slack = SAME_TIME * end;
   }
 
-  /** Takes a step in; `placeAt` tells the place of the scalar at a fraction of the step. */
-  observe(quarters: Quarters, course: Course, placeAt: (fraction: number) => number | null): void {
+  /** Takes a step in. */
+  observe(quarters: Quarters, subject: Subject): void {
     const { look, counts } = this.window;
     const looked = this.clip(look, quarters);
     if (looked === null) return;
+    const rough = subject.rough();
+    const course = this.isSettledBy(rough) ? rough : subject.course();
     const momentAt = (fraction: number, value: number): Moment => ({
       time: quarters.time(fraction),
       stage: quarters.step.stage,
       value,
-      position: placeAt(fraction),
+      position: subject.placeAt(fraction),
     });
     for (const { from, to } of course.holds(this.condition, looked)) {
       const last = this.holds.at(-1);
@@ -64,6 +75,23 @@ export class Tally {
       if (this.isBetter(value, this.best)) this.best = momentAt(fraction, value);
       if (this.worst === null || this.margin(value) < this.margin(this.worst.value)) this.worst = momentAt(fraction, value);
     }
+  }
+
+  /**
+   * Whether the rough course tells as much as the exact one: no limit anywhere near, and its best and worst are at the ends
+   * of the step or of no account.
+   */
+  private isSettledBy(rough: Course): boolean {
+    const [low, high] = rough.bounds();
+    if (low <= this.condition.limit && this.condition.limit <= high) return false;
+    if (rough.monotone) return true;
+    return ![low, high].some(
+      (value) =>
+        this.isBetter(value, this.bestEver) ||
+        this.isBetter(value, this.best) ||
+        this.worst === null ||
+        this.margin(value) < this.margin(this.worst.value),
+    );
   }
 
   private isBetter(value: number, than: Moment | null): boolean {

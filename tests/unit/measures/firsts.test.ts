@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { playField } from '../../support/madeUpRun';
+import { madeUpStep, playField, type FieldFunction } from '../../support/madeUpRun';
 import { plan } from '../../support/plan';
 
 describe('the hottest point and the largest differences', () => {
@@ -39,5 +39,23 @@ describe('the hottest point and the largest differences', () => {
     expect(first.largestDifference).toBeNull();
     expect(first.largestDifferenceInMaterial).toBeNull();
     expect(first.hottest).toEqual({ position_m: 0, layer: 'l1', time_s: 100, temperature_C: 120 });
+  });
+
+  it('find a point that is hottest only between the quarters of a step', () => {
+    // The middle point stays at 100 °C; the others have 99.9, 99.9, 90, 99.9, 99.9 at the quarters and swing above it between.
+    const swing = [99.9, 99.9, 90, 99.9, 99.9];
+    const points = { position: Float64Array.of(0, 0.05, 0.1), layerStart: Int32Array.of(0, 3) };
+    const field: FieldFunction = (_, t, point) => (point === 1 ? 100 : swing[Math.round(t / 25)]);
+    const profile = new Float64Array(3);
+    const step = madeUpStep(points, field, 0, 100);
+    let highest = 0;
+    for (let k = 0; k <= 1000; k++) {
+      step.at(k / 1000, profile);
+      highest = Math.max(highest, ...profile);
+    }
+    expect(highest).toBeGreaterThan(101);
+    const { first } = playField(plan({ layers: [0.1], stages: [100] }), field, { steps: 1, points });
+    expect(first.hottest?.temperature_C).toBeCloseTo(highest, 3);
+    expect(first.hottest?.position_m).toBe(0);
   });
 });
