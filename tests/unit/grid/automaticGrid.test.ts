@@ -79,14 +79,20 @@ describe('the automatic grid', () => {
     }
   });
 
-  it('asks for plain storage where a jump is finer than its first element, and there only', () => {
+  it('asks for plain storage where a front is finer than the elements, and there only', () => {
     expect(gridFor({ ...heated, stages: [{ lasts: 3600, start: film(2, 500) }] }).plainRows).toEqual([{ start: 0, end: 0 }]);
-    expect(gridFor({ ...heated, stages: [{ lasts: 3600, end: held(500) }] }).plainRows).toEqual([{ start: 0, end: 3 }]);
+    expect(gridFor({ ...heated, stages: [{ lasts: 3600, end: held(500) }] }).plainRows).toEqual([{ start: 0, end: 5 }]);
     expect(gridFor({ ...heated, stages: [{ lasts: 3600, end: held(20) }] }).plainRows).toEqual([{ start: 0, end: 0 }]);
-    expect(gridFor(heated, { grid: { nodes: 6 } }).plainRows).toEqual([{ start: 3, end: 0 }]);
+    const behindSteel: WallSpec = { ...heated, layers: [{ ...steel, thickness: 0.005 }, brick, steel] };
+    expect(gridFor(behindSteel, { grid: { nodes: 6 } }).plainRows?.map(({ start, end }) => [start, end])).toEqual([
+      [5, 0],
+      [5, 0],
+      [0, 0],
+    ]);
+    expect(gridFor(heated, { grid: { nodes: 6 } }).plainRows).toEqual([{ start: 5, end: 0 }]);
     expect(gridFor({ layers: [brick, brick], initial: [500, 20], stages: [{ lasts: 60 }] }).plainRows).toEqual([
-      { start: 0, end: 3 },
-      { start: 3, end: 0 },
+      { start: 0, end: 5 },
+      { start: 5, end: 0 },
     ]);
   });
 
