@@ -1,5 +1,15 @@
 /** What the answers strip says: a chip a requirement, worst first where not all fit, and the sentence of a change. */
-import { marginInWords, orKind, requirementInWords, VERDICT_WORDS, verdictNow, type SignKind, type VerdictView } from '../ui';
+import {
+  marginInWords,
+  orKind,
+  requirementInWords,
+  requirementParts,
+  VERDICT_WORDS,
+  verdictNow,
+  type RequirementWords,
+  type SignKind,
+  type VerdictView,
+} from '../ui';
 import type { Answer, Project, Requirement } from '../../solver/model';
 import { formatDuration, formatQuantity, type UnitSystem } from '../../solver/model/quantities';
 
@@ -7,6 +17,7 @@ export interface ChipView extends VerdictView {
   id: string;
   name: string;
   rule: string;
+  parts: RequirementWords;
   answer: Answer | undefined;
   /** "worst at", "closest at": before the time; empty where the time is when it was met. */
   lead: string;
@@ -30,6 +41,7 @@ export function chipOf(requirement: Requirement, { project, answers, run, system
     id: requirement.id,
     name: orKind(requirement.name, rule),
     rule,
+    parts: requirementParts(requirement, project, system),
     answer,
     ...verdictNow(answer, run),
     ...whenOf(requirement, answer),

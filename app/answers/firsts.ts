@@ -9,6 +9,8 @@ export interface FirstView {
   figure: string;
   beside: string;
   below: string;
+  /** More, under the pointer. */
+  hint: string;
   /** Cycle time that a click goes to, s; null where nothing changes. */
   time_s: number | null;
 }
@@ -18,7 +20,7 @@ const AT_FACE = 1e-6;
 
 export function firstViews(first: FirstAnswers, project: Project, system: UnitSystem): FirstView[] {
   const { slowest, hottest, largestDifference, largestDifferenceInMaterial: within } = first;
-  const views: FirstView[] = [
+  return [
     slowest === null
       ? nothing('slow', 'Slowest point')
       : {
@@ -27,6 +29,7 @@ export function firstViews(first: FirstAnswers, project: Project, system: UnitSy
           figure: layerName(project, slowest.layer),
           beside: `at ${depthInWords(slowest.position_m, system)}`,
           below: `last to settle, ${formatDuration(slowest.time_s)}`,
+          hint: '',
           time_s: slowest.time_s,
         },
     hottest === null
@@ -37,15 +40,13 @@ export function firstViews(first: FirstAnswers, project: Project, system: UnitSy
           figure: temperatureInWords(hottest.temperature_C, system),
           beside: spotInWords(hottest.position_m, project, system),
           below: `at ${formatDuration(hottest.time_s)}`,
+          hint: '',
           time_s: hottest.time_s,
         },
-    differenceView('Largest difference', largestDifference, project, system),
+    largestDifference === null
+      ? nothing('gap', 'Largest difference')
+      : differenceView(largestDifference, within, project, system),
   ];
-  if (within !== null && largestDifference !== null && within.value_K < largestDifference.value_K * 0.999) {
-    const material = orKind(project.materials.find((item) => item.id === within.material)?.name, 'one material');
-    views.push({ ...differenceView('Within one material', within, project, system), beside: material });
-  }
-  return views;
 }
 
 const nothing = (icon: IconName, label: string): FirstView => ({
@@ -54,20 +55,34 @@ const nothing = (icon: IconName, label: string): FirstView => ({
   figure: '–',
   beside: '',
   below: 'nothing changes',
+  hint: '',
   time_s: null,
 });
 
-function differenceView(label: string, difference: LargestDifference | null, project: Project, system: UnitSystem): FirstView {
-  if (difference === null) return nothing('gap', label);
-  const [cold, hot] = difference.between.map((depth) => spotInWords(depth, project, system));
-  return {
-    icon: 'gap',
-    label,
-    figure: differenceInWords(difference.value_K, system),
-    beside: `${hot} to ${cold}`,
-    below: `at ${formatDuration(difference.time_s)}`,
-    time_s: difference.time_s,
-  };
+/** In the whole part; and within one material, which is the one a planner limits, where that is another. */
+function differenceView(
+  difference: LargestDifference,
+  within: FirstAnswers['largestDifferenceInMaterial'],
+  project: Project,
+  system: UnitSystem,
+): FirstView {
+  const view = { icon: 'gap' as const, label: 'Largest difference', time_s: difference.time_s };
+  const figure = differenceInWords(difference.value_K, system);
+  const when = `at ${formatDuration(difference.time_s)}`;
+  const between = betweenInWords(difference, project, system);
+  if (within === null || within.value_K > difference.value_K * 0.999) {
+    return { ...view, figure, beside: between, below: when, hint: '' };
+  }
+  const inOne = differenceInWords(within.value_K, system);
+  const material = orKind(project.materials.find((item) => item.id === within.material)?.name, 'one material');
+  const spot = betweenInWords(within, project, system);
+  const hint = `${between}. Within one material ${inOne}, ${material}, ${spot}, at ${formatDuration(within.time_s)}`;
+  return { ...view, figure, beside: when, below: `in one material ${inOne}`, hint };
+}
+
+function betweenInWords({ between }: LargestDifference, project: Project, system: UnitSystem): string {
+  const [cold, hot] = between.map((depth) => spotInWords(depth, project, system));
+  return `${hot} to ${cold}`;
 }
 
 /** "hot face", "120 mm deep". */

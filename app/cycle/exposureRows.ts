@@ -23,10 +23,10 @@ import type { QuantityKind } from '../../solver/model/quantities';
 
 export const EXPOSURE_COLUMNS: readonly Column[] = [
   { head: '' },
-  { head: 'Meets', width: '21%' },
-  { head: 'Film coefficient', width: '21%', align: 'right' },
-  { head: 'Outside', width: '17%' },
-  { head: 'Value', width: '16%', align: 'right' },
+  { head: 'Meets', width: '20%' },
+  { head: 'Film coefficient', width: '19%', align: 'right' },
+  { head: 'Outside', width: '19%' },
+  { head: 'Value', width: '15%', align: 'right' },
 ];
 
 const KINDS: readonly ExposureKind[] = ['film', 'temperature', 'flux', 'insulated'];
@@ -145,8 +145,7 @@ function outsideCells(at: At, key: ScheduleKey, schedule: TemperatureSchedule): 
   return [choice, offset];
 }
 
-const labelOf = (source: Source): string =>
-  ({ constant: 'constant', setPoint: 'the set-point', ramps: 'own ramps' })[source];
+const labelOf = (source: Source): string => ({ constant: 'constant', setPoint: 'the set-point', ramps: 'own ramps' })[source];
 
 /** A schedule of another source that starts from what the face meets at the start of the stage. */
 function scheduleFrom(source: Source, at: At, key: ScheduleKey): TemperatureSchedule | PlainSchedule {
@@ -172,7 +171,14 @@ function coefficientActions(at: At): Row['more'] {
       label: constant ? 'Film coefficient over time' : 'Constant film coefficient',
       command: () => {
         const next: Source = constant ? 'ramps' : 'constant';
-        return setSchedule(stage, face, faceName(project, face), 'coefficient', scheduleFrom(next, at, 'coefficient'), labelOf(next));
+        return setSchedule(
+          stage,
+          face,
+          faceName(project, face),
+          'coefficient',
+          scheduleFrom(next, at, 'coefficient'),
+          labelOf(next),
+        );
       },
     },
   ];

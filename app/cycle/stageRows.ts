@@ -17,10 +17,10 @@ import { courseInWords, valueAtStart } from './course';
 
 export const STAGE_COLUMNS: readonly Column[] = [
   { head: '' },
-  { head: 'Set-point', width: '31%' },
-  { head: 'Ends', width: '17%' },
+  { head: 'Set-point', width: '27%' },
+  { head: 'Ends', width: '16.5%' },
   { head: 'Length', width: '15%', align: 'right' },
-  { head: 'Ends at', width: '16%', align: 'right' },
+  { head: 'Ends at', width: '15%', align: 'right' },
 ];
 
 export const stageRows = (project: Project, laid: LaidCycle | null, system: UnitSystem): Row[] =>

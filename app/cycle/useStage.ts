@@ -7,7 +7,10 @@ export function useStage(): { stage: ComputedRef<Stage>; index: ComputedRef<numb
   const project = useProjectStore();
   const view = useViewStore();
   const index = computed(() =>
-    Math.max(0, project.current.cycle.stages.findIndex((stage) => stage.id === view.selectedStage)),
+    Math.max(
+      0,
+      project.current.cycle.stages.findIndex((stage) => stage.id === view.selectedStage),
+    ),
   );
   return { stage: computed(() => project.current.cycle.stages[index.value]), index };
 }

@@ -20,13 +20,14 @@ import {
 } from '../commands';
 import { tintOf, type Cell, type Column, type Row } from '../ui';
 import type { Layer, Project } from '../../solver/model';
+import type { UnitSystem } from '../../solver/model/quantities';
 
-export const LAYER_COLUMNS: readonly Column[] = [
-  { head: '' },
-  { head: 'Material', width: '29%' },
-  { head: 'Thickness', width: '14.5%', align: 'right' },
-  { head: 'Contact to next', width: '20.5%', align: 'right' },
-  { head: 'Start', width: '12%', align: 'right' },
+export const layerColumns = (system: UnitSystem): readonly Column[] => [
+  { head: '', width: '23%' },
+  { head: 'Material' },
+  { head: 'Thickness', width: '76px', align: 'right' },
+  { head: 'Contact to next', width: system === 'SI' ? '112px' : '138px', align: 'right' },
+  { head: 'Start', width: '62px', align: 'right' },
 ];
 
 /** The choice that makes a material instead of taking one. */

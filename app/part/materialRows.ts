@@ -50,16 +50,14 @@ function materialCells(project: Project, material: Material, index: number): Cel
       path: [...path, 'name'],
       edit: (name) => renameMaterial(material, name),
     },
-    ...SPECS.map(
-      (spec): Cell => ({
-        kind: 'quantity',
-        spec,
-        value: material[spec.quantity],
-        typed: typedAt(project, [...path, spec.quantity]),
-        path: [...path, spec.quantity],
-        edit: (entered) => setMaterialProperty(material, spec.quantity, entered),
-      }),
-    ),
+    ...SPECS.map((spec): Cell => ({
+      kind: 'quantity',
+      spec,
+      value: material[spec.quantity],
+      typed: typedAt(project, [...path, spec.quantity]),
+      path: [...path, spec.quantity],
+      edit: (entered) => setMaterialProperty(material, spec.quantity, entered),
+    })),
     {
       kind: 'text',
       text: material.source ?? '',

@@ -49,7 +49,10 @@ export function placeOfKind(kind: PlaceKind, at: Place, project: Project): Place
   if (kind === 'face') return { face: depth < total / 2 ? 'start' : 'end' };
   const edges = layers.map((layer) => depthOf({ layer: layer.id, fraction: 1 }, layers));
   if (kind === 'layer') {
-    const index = Math.max(0, edges.findIndex((edge) => depth <= edge * (1 + 1e-9)));
+    const index = Math.max(
+      0,
+      edges.findIndex((edge) => depth <= edge * (1 + 1e-9)),
+    );
     const front = index === 0 ? 0 : edges[index - 1];
     return { layer: layers[index].id, fraction: tidy(Math.min(1, (depth - front) / layers[index].thickness)) };
   }
@@ -104,7 +107,13 @@ function whereCell(project: Project, probe: Probe, index: number, place: (at: Pl
       { value: 'start', label: orKind(faces.start.name, 'start face') },
       { value: 'end', label: orKind(faces.end.name, 'end face') },
     ];
-    return { kind: 'choice', value: at.face, options, path: [...path, 'face'], edit: (face) => place({ face: face as 'start' | 'end' }) };
+    return {
+      kind: 'choice',
+      value: at.face,
+      options,
+      path: [...path, 'face'],
+      edit: (face) => place({ face: face as 'start' | 'end' }),
+    };
   }
   if ('interface' in at) {
     const options = layers.slice(0, -1).flatMap((layer, i) => {

@@ -15,9 +15,9 @@ import type { UnitSystem } from '../../solver/model/quantities';
 
 export const REQUIREMENT_COLUMNS: readonly Column[] = [
   { head: '' },
-  { head: 'Limit', width: '15%', align: 'right' },
-  { head: 'Counts', width: '33%' },
-  { head: 'Verdict', width: '18%' },
+  { head: 'Limit', width: '13.5%', align: 'right' },
+  { head: 'Counts', width: '37%' },
+  { head: 'Verdict', width: '15%' },
 ];
 
 export interface RequirementContext {

@@ -2,7 +2,8 @@
 import { subjectInWords } from '../ui';
 import type { Counts, Project, Requirement, Rule, Subject } from '../../solver/model';
 
-export type RuleChoice = 'reaches atLeast' | 'reaches atMost' | 'staysBelow' | 'staysAbove' | 'heldFor atLeast' | 'heldFor atMost';
+export type RuleChoice =
+  'reaches atLeast' | 'reaches atMost' | 'staysBelow' | 'staysAbove' | 'heldFor atLeast' | 'heldFor atMost';
 
 export const RULE_CHOICES: readonly { value: RuleChoice; label: string }[] = [
   { value: 'reaches atLeast', label: 'reaches at least' },
@@ -51,7 +52,8 @@ export const COUNTS_CHOICES: readonly { value: Counts['kind']; label: string }[]
 
 /** Another place to count that keeps the stage and the time where both have them. */
 export function countsOfKind(kind: Counts['kind'], before: Counts, stage: string): Counts {
-  const known = before.kind === 'stage' || before.kind === 'stageEnd' ? before.stage : before.kind === 'within' ? before.from : undefined;
+  const known =
+    before.kind === 'stage' || before.kind === 'stageEnd' ? before.stage : before.kind === 'within' ? before.from : undefined;
   switch (kind) {
     case 'cycle':
       return { kind };

@@ -37,7 +37,8 @@ export function commandOf(press: KeyPress, modifier: Modifier): CommandName | nu
   if (press.key === 'F1') return 'shortcuts';
   if (press.key === 'F6') return press.shift ? 'previous-panel' : 'next-panel';
   const letter = press.code.startsWith('Key') ? press.code.slice(3) : press.code.replace('Digit', '');
-  if (press.alt && !press.ctrl && modifier === 'Alt') return { N: 'new', 1: 'plan', 2: 'start' }[letter] as CommandName | null ?? null;
+  if (press.alt && !press.ctrl && modifier === 'Alt')
+    return ({ N: 'new', 1: 'plan', 2: 'start' }[letter] as CommandName | null) ?? null;
   if (!press.ctrl || press.alt) return null;
   switch (letter) {
     case 'Z':

@@ -193,7 +193,12 @@ export function useDesk(host: Host): Desk {
   async function writeJournal(plan: Project, edited: boolean): Promise<void> {
     if (!edited && !journalHolds) return;
     journalHolds = edited;
-    const entry = { title: plan.title, edited: new Date().toISOString(), text: writeProject(plan), fileName: project.file?.name ?? null };
+    const entry = {
+      title: plan.title,
+      edited: new Date().toISOString(),
+      text: writeProject(plan),
+      fileName: project.file?.name ?? null,
+    };
     await (edited ? host.journal.write(entry) : host.journal.clear()).catch(() => undefined);
   }
 
@@ -242,6 +247,10 @@ export function useDesk(host: Host): Desk {
 
 /** A file name from a title: what no file system minds. */
 export function fileName(title: string): string {
-  const plain = title.replace(/[\\/:*?"<>|\p{Cc}]+/gu, ' ').replace(/\s+/g, ' ').replace(/^[. ]+|[. ]+$/g, '').slice(0, 80);
+  const plain = title
+    .replace(/[\\/:*?"<>|\p{Cc}]+/gu, ' ')
+    .replace(/\s+/g, ' ')
+    .replace(/^[. ]+|[. ]+$/g, '')
+    .slice(0, 80);
   return `${plain || 'Untitled plan'}.soak`;
 }

@@ -1,11 +1,12 @@
-/** A plan as a small drawing: its layers to scale, its set-point over time, and the limits of its requirements. */
+/** A plan as a small drawing: its layers to scale, what its faces meet over time, and the limits of its requirements. */
 import { extent, layLayers, linearScale, linePath } from '../draw';
-import { layCycle, type Project } from '../../solver/model';
+import { FACES, layCycle, type FaceId, type LaidCycle, type Line, type Project } from '../../solver/model';
 import { tintOf } from '../ui';
 
 export interface CardDrawing {
   layers: { x: number; width: number; tint: string }[];
-  setPoint: string;
+  /** What the faces meet over time, or the set-point where they meet nothing that changes. */
+  courses: string[];
   /** Heights of the temperature limits. */
   limits: number[];
   duration_s: number;
@@ -25,8 +26,12 @@ export function drawCard(project: Project): CardDrawing {
     LEAST_LAYER,
   );
   const laid = layCycle(project);
+  const outside = FACES.map((face) => outsideOf(laid, face)).filter((line) =>
+    line.value.some((value) => value !== line.value[0]),
+  );
+  const courses = outside.length > 0 ? outside : [laid.setPoint];
   const limits = project.requirements.filter(({ of }) => !('difference' in of)).map(({ must }) => must.limit);
-  const [low, high] = extent([laid.setPoint.value, limits]) ?? [0, 1];
+  const [low, high] = extent([...courses.map(({ value }) => value), limits]) ?? [0, 1];
   const time = linearScale(0, laid.end, COURSE.left, COURSE.right);
   const value = linearScale(low, high > low ? high : low + 1, COURSE.bottom - 4, COURSE.top + 4);
   return {
@@ -35,11 +40,25 @@ export function drawCard(project: Project): CardDrawing {
       width: row.edges[index + 1] - row.edges[index],
       tint: tintOf(project, layer.material),
     })),
-    setPoint: linePath(
-      laid.setPoint.time.map((at) => time.at(at)),
-      laid.setPoint.value.map((at) => value.at(at)),
+    courses: courses.map((line) =>
+      linePath(
+        line.time.map((at) => time.at(at)),
+        line.value.map((at) => value.at(at)),
+      ),
     ),
     limits: limits.map((limit) => value.at(limit)),
     duration_s: laid.end,
   };
+}
+
+/** The temperature outside a face over the whole cycle, °C; a stage that gives none leaves a gap. */
+function outsideOf(laid: LaidCycle, face: FaceId): Line {
+  const whole: Line = { time: [], value: [] };
+  for (const { exposures, start } of laid.stages) {
+    const exposure = exposures[face];
+    const line = exposure.kind === 'film' ? exposure.surroundings : exposure.kind === 'temperature' ? exposure.temperature : null;
+    whole.time.push(...(line?.time ?? [start]));
+    whole.value.push(...(line?.value ?? [Number.NaN]));
+  }
+  return whole;
 }

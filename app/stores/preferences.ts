@@ -10,7 +10,10 @@ const preferencesSchema = z
     theme: z.enum(['system', 'light', 'dark', 'contrast']),
     speed: z.number().positive(),
     snap: z.boolean(),
-    tables: z.partialRecord(z.enum(['part', 'materials', 'probes', 'exposure', 'cycle', 'requirements', 'solver', 'notes']), z.boolean()),
+    tables: z.partialRecord(
+      z.enum(['part', 'materials', 'probes', 'exposure', 'cycle', 'requirements', 'solver', 'notes']),
+      z.boolean(),
+    ),
     workHeight: z.number().nullable(),
     sheetWidth: z.number().nullable(),
   })

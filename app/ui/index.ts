@@ -25,6 +25,7 @@ export {
   orKind,
   placeInWords,
   requirementInWords,
+  requirementParts,
   stageName,
   subjectInWords,
   temperatureInWords,
@@ -32,6 +33,7 @@ export {
   VERDICT_WORDS,
   verdictNow,
   whereInWords,
+  type RequirementWords,
   type SignKind,
   type VerdictView,
 } from './words';

@@ -51,7 +51,11 @@ export function readEntered(text: string, spec: QuantitySpec, system: UnitSystem
 }
 
 /** The number as a field or a cell shows it. */
-export function shownNumber(value: number | null, spec: QuantitySpec, system: UnitSystem): { number: string; unit: string; text: string } {
+export function shownNumber(
+  value: number | null,
+  spec: QuantitySpec,
+  system: UnitSystem,
+): { number: string; unit: string; text: string } {
   if (value === null) return { number: '', unit: '', text: '' };
   if (value === 0 && spec.zero !== undefined) return { number: spec.zero, unit: '', text: spec.zero };
   return formatQuantity(value, spec.quantity, system);
@@ -61,8 +65,7 @@ export function shownNumber(value: number | null, spec: QuantitySpec, system: Un
 export function brokenBound(value: number, { name, quantity, bounds = {} }: QuantitySpec, system: UnitSystem): string | null {
   const { above, atLeast, below, atMost } = bounds;
   const written = (bound: number): string => formatQuantity(bound, quantity, system).text;
-  const must = (rule: string, bound: number): string =>
-    `${name} must be ${rule} ${written(bound)}, got ${written(value)}.`;
+  const must = (rule: string, bound: number): string => `${name} must be ${rule} ${written(bound)}, got ${written(value)}.`;
   if (above !== undefined && value <= above) return must('more than', above);
   if (atLeast !== undefined && value < atLeast) return must('at least', atLeast);
   if (below !== undefined && value >= below) return must('less than', below);

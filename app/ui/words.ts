@@ -11,11 +11,11 @@ const nameIn = (list: readonly { id: string; name: string }[], id: string, kind:
 export const layerName = (project: Project, id: string): string => nameIn(project.part.layers, id, 'layer');
 export const stageName = (project: Project, id: string): string => nameIn(project.cycle.stages, id, 'stage');
 
-/** "Core", "Coldest point", "Difference within one material". */
+/** "Core", "Coldest point", "Difference in one material". */
 export function subjectInWords(of: Subject, project: Project): string {
   if ('probe' in of) return nameIn(project.probes, of.probe, 'probe');
   if ('point' in of) return of.point === 'coldest' ? 'Coldest point' : 'Hottest point';
-  return of.difference === 'part' ? 'Difference in the part' : 'Difference within one material';
+  return of.difference === 'part' ? 'Difference in the part' : 'Difference in one material';
 }
 
 /** Kind of the limit of a requirement: a difference is limited in K, everything else in °C. */
@@ -50,16 +50,32 @@ export function whereInWords(requirement: Requirement, project: Project): string
   const { must, counts } = requirement;
   const where = countsInWords(counts, project);
   if (must.kind === 'heldFor') return `for ${formatDuration(must.duration)}, ${where}`;
-  return must.kind === 'reaches' ? `reached, ${where}` : `always, ${where}`;
+  return must.kind === 'reaches' ? `once, ${where}` : `always, ${where}`;
 }
 
-/** "Core ≥ 540 °C for 30 min": what a chip is headed with. The whole cycle goes without saying. */
-export function requirementInWords(requirement: Requirement, project: Project, system: UnitSystem): string {
+export interface RequirementWords {
+  /** "Core" */
+  subject: string;
+  /** "≥ 540 °C for 30 min": never cut where room is short. */
+  limit: string;
+  /** "at the end of Soak"; empty for the whole cycle, which goes without saying. */
+  where: string;
+}
+
+export function requirementParts(requirement: Requirement, project: Project, system: UnitSystem): RequirementWords {
   const { of, must, counts } = requirement;
-  const limit = formatQuantity(must.limit, limitKind(of), system).text;
-  const held = must.kind === 'heldFor' ? ` for ${formatDuration(must.duration)}` : '';
-  const where = counts.kind === 'cycle' ? '' : ` ${countsInWords(counts, project)}`;
-  return `${subjectInWords(of, project)} ${limitSign(requirement)} ${limit}${held}${where}`;
+  const limit = `${limitSign(requirement)} ${formatQuantity(must.limit, limitKind(of), system).text}`;
+  return {
+    subject: subjectInWords(of, project),
+    limit: must.kind === 'heldFor' ? `${limit} for ${formatDuration(must.duration)}` : limit,
+    where: counts.kind === 'cycle' ? '' : countsInWords(counts, project),
+  };
+}
+
+/** "Core ≥ 540 °C for 30 min at the end of Soak". */
+export function requirementInWords(requirement: Requirement, project: Project, system: UnitSystem): string {
+  const { subject, limit, where } = requirementParts(requirement, project, system);
+  return `${subject} ${limit}${where === '' ? '' : ` ${where}`}`;
 }
 
 /** "120 mm deep", "middle of Shell", "Hot face", "Lining side of Lining / Shell". */

@@ -33,7 +33,8 @@ const quoted = (cell: string): string => (/["\t\n]/.test(cell) ? `"${cell.replac
 /** The same rows as a table of a web page. */
 export function htmlBlock(rows: readonly (readonly string[])[]): string {
   const safe = (cell: string): string => cell.replaceAll('&', '&amp;').replaceAll('<', '&lt;').replaceAll('>', '&gt;');
-  const line = (row: readonly string[], tag: string): string => `<tr>${row.map((cell) => `<${tag}>${safe(cell)}</${tag}>`).join('')}</tr>`;
+  const line = (row: readonly string[], tag: string): string =>
+    `<tr>${row.map((cell) => `<${tag}>${safe(cell)}</${tag}>`).join('')}</tr>`;
   return `<table>${rows.map((row, index) => line(row, index === 0 ? 'th' : 'td')).join('')}</table>`;
 }
 

@@ -35,13 +35,7 @@ export function moveBy(key: string, ctrl: boolean, at: Place, rows: number, colu
 }
 
 /** The next cell in reading order for which `wanted` holds, forwards or backwards; null at the ends. */
-export function nextCell(
-  at: Place,
-  by: 1 | -1,
-  rows: number,
-  columns: number,
-  wanted: (place: Place) => boolean,
-): Place | null {
+export function nextCell(at: Place, by: 1 | -1, rows: number, columns: number, wanted: (place: Place) => boolean): Place | null {
   for (let index = at.row * columns + at.column + by; index >= 0 && index < rows * columns; index += by) {
     const place = { row: Math.floor(index / columns), column: index % columns };
     if (wanted(place)) return place;

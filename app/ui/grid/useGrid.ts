@@ -11,6 +11,9 @@ export interface Grid {
   /** Texts that were refused, by cell: nothing typed is lost. */
   refusedText(row: Row, column: number): string | undefined;
   setRefused(row: string, column: number, text: string | null): void;
+  /** Puts the tab stop on a cell that has the focus already. */
+  take(place: Place): void;
+  /** Puts the tab stop and the focus on a cell. */
   goTo(place: Place): void;
   /** Moves by an arrow or the like; false for other keys. */
   moveByKey(key: string, ctrl: boolean): boolean;
@@ -35,12 +38,15 @@ export function useGrid(rows: () => readonly Row[], columns: () => number, table
 
   const cellAt = (place: Place): Cell | undefined => rows()[place.row]?.cells[place.column];
 
-  function goTo(place: Place, focus = true): void {
+  function take(place: Place): void {
     at.value = { row: rows()[place.row]?.id ?? '', index: place.row, column: place.column };
-    if (!focus) return;
+  }
+
+  function goTo(place: Place): void {
+    take(place);
     void nextTick(() => {
       const cell = table.value?.querySelector<HTMLElement>(`[data-row="${place.row}"][data-column="${place.column}"]`);
-      cell?.focus({ preventScroll: false });
+      cell?.focus();
       cell?.scrollIntoView?.({ block: 'nearest', inline: 'nearest' });
     });
   }
@@ -54,6 +60,7 @@ export function useGrid(rows: () => readonly Row[], columns: () => number, table
       if (text === null) refused.value.delete(keyOf(row, column));
       else refused.value.set(keyOf(row, column), text);
     },
+    take,
     goTo,
     moveByKey(key, ctrl) {
       const to = moveBy(key, ctrl, cursor.value, rows().length, columns());
@@ -63,7 +70,7 @@ export function useGrid(rows: () => readonly Row[], columns: () => number, table
     edit(place, startWith) {
       const row = rows()[place.row];
       if (row === undefined || !isEditable(row.cells[place.column])) return false;
-      goTo(place, false);
+      take(place);
       const kept = refused.value.get(keyOf(row.id, place.column));
       editing.value = { row: row.id, column: place.column, startWith: startWith ?? kept };
       return true;
