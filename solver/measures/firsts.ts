@@ -3,8 +3,8 @@ import type { FirstAnswers, Part } from '../model';
 import type { FieldOverStep, FieldQuantity } from './field';
 import type { Quarters } from './quarters';
 
-/** A difference below this is rounding, K. */
-const NO_DIFFERENCE_K = 1e-9;
+/** A record must be broken by more than rounding, K, so that a plateau has it at its first instant. */
+const ROUNDING_K = 1e-9;
 
 export class Firsts {
   private readonly part: Pick<Part, 'layers'>;
@@ -30,7 +30,7 @@ export class Firsts {
         temperature_C: value,
       };
     }
-    const part = highest(field, 'part', this.difference?.value_K ?? NO_DIFFERENCE_K);
+    const part = highest(field, 'part', this.difference?.value_K ?? 0);
     if (part !== null) {
       const { coldest, hottest } = field.extremesAt(part);
       this.difference = {
@@ -39,7 +39,7 @@ export class Firsts {
         between: [coldest.position, hottest.position],
       };
     }
-    const material = highest(field, 'material', this.inMaterial?.value_K ?? NO_DIFFERENCE_K);
+    const material = highest(field, 'material', this.inMaterial?.value_K ?? 0);
     if (material !== null) {
       const { coldestInPiece, hottestInPiece, piece } = field.extremesAt(material);
       this.inMaterial = {
@@ -59,11 +59,11 @@ export class Firsts {
 /** The fraction at which a quantity is highest in the step, if it is above `best` there; null otherwise. */
 function highest(field: FieldOverStep, quantity: FieldQuantity, best: number): number | null {
   const rough = field.rough(quantity);
-  if (rough.bounds()[1] <= best) return null;
+  if (rough.bounds()[1] <= best + ROUNDING_K) return null;
   let fraction: number | null = null;
   let top = best;
   for (const sample of (rough.monotone ? rough : field.course(quantity)).samples()) {
-    if (sample.value > top) {
+    if (sample.value > top + ROUNDING_K) {
       top = sample.value;
       fraction = sample.fraction;
     }

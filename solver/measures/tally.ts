@@ -1,5 +1,5 @@
 /** What is kept of a scalar while it is watched against a condition: when it held, its best and its worst. */
-import { beyond, type Condition, type Course, type Stretch } from './course';
+import { beyond, EQUAL_K, type Condition, type Course, type Stretch } from './course';
 import type { Quarters } from './quarters';
 import type { LaidWindow, Window } from './windows';
 
@@ -73,7 +73,7 @@ export class Tally {
     if (counted === null) return;
     for (const { fraction, value } of course.samplesIn(counted)) {
       if (this.isBetter(value, this.best)) this.best = momentAt(fraction, value);
-      if (this.worst === null || this.margin(value) < this.margin(this.worst.value)) this.worst = momentAt(fraction, value);
+      if (this.isWorse(value, this.worst)) this.worst = momentAt(fraction, value);
     }
   }
 
@@ -86,16 +86,17 @@ export class Tally {
     if (low <= this.condition.limit && this.condition.limit <= high) return false;
     if (rough.monotone) return true;
     return ![low, high].some(
-      (value) =>
-        this.isBetter(value, this.bestEver) ||
-        this.isBetter(value, this.best) ||
-        this.worst === null ||
-        this.margin(value) < this.margin(this.worst.value),
+      (value) => this.isBetter(value, this.bestEver) || this.isBetter(value, this.best) || this.isWorse(value, this.worst),
     );
   }
 
+  // By more than rounding, so that a plateau is best, or worst, at its first instant.
   private isBetter(value: number, than: Moment | null): boolean {
-    return than === null || this.margin(value) > this.margin(than.value);
+    return than === null || this.margin(value) > this.margin(than.value) + EQUAL_K;
+  }
+
+  private isWorse(value: number, than: Moment | null): boolean {
+    return than === null || this.margin(value) < this.margin(than.value) - EQUAL_K;
   }
 
   margin(value: number): number {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { madeUpStep, playField, type FieldFunction } from '../../support/madeUpRun';
-import { plan } from '../../support/plan';
+import { plan, requirement } from '../../support/plan';
 
 describe('the hottest point and the largest differences', () => {
   it('are found inside steps and between points', () => {
@@ -57,5 +57,15 @@ describe('the hottest point and the largest differences', () => {
     const { first } = playField(plan({ layers: [0.1], stages: [100] }), field, { steps: 1, points });
     expect(first.hottest?.temperature_C).toBeCloseTo(highest, 3);
     expect(first.hottest?.position_m).toBe(0);
+  });
+
+  it('are at the first instant of a plateau, whatever its rounding', () => {
+    const project = plan({ stages: [100], requirements: [requirement({ kind: 'staysBelow', limit: 90 })] });
+    const { first, answers } = playField(project, (x, t) => 20 + (t < 40 ? t : 40) * (x === 0 ? 2 : 1) + 1e-13 * t, {
+      steps: [40],
+    });
+    expect(first.hottest?.time_s).toBe(40);
+    expect(first.largestDifference?.time_s).toBe(40);
+    expect(answers[0].time_s).toBe(40);
   });
 });
