@@ -90,7 +90,7 @@ export function judge(requirement: Requirement, tally: Tally, cycle: LaidCycle, 
 }
 
 /** Unit of a requirement's margin: s for "within" and "held for", K for all other limits. */
-export const marginUnit = ({ must, counts }: Pick<Requirement, 'must' | 'counts'>): 'K' | 's' =>
+const marginUnit = ({ must, counts }: Pick<Requirement, 'must' | 'counts'>): 'K' | 's' =>
   must.kind === 'heldFor' || (must.kind === 'reaches' && counts.kind === 'within') ? 's' : 'K';
 
 function judgementOf({ must, counts }: Requirement, tally: Tally, over: (time: number) => boolean): Judgement {

@@ -126,7 +126,7 @@ export const reportSchema = z
       .strictObject({
         explicit_limit_s: quantity('s', {}, 'largest stable step of the explicit scheme on this grid'),
         no_overshoot_s: quantity('s', {}, 'largest step of the explicit scheme without overshoot'),
-        set_by: z.strictObject({ layer: text, position_m: depth }),
+        set_by: z.strictObject({ layer: text.describe('name of the layer'), position_m: depth }),
       })
       .nullable(),
     solver: z.strictObject({
