@@ -1,0 +1,2 @@
+/** Doors of the section. */
+export { default as SectionPanel } from './SectionPanel.vue';

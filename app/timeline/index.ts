@@ -1,0 +1,2 @@
+/** Doors of the timeline. */
+export { default as TimelinePanel } from './TimelinePanel.vue';
