@@ -24,7 +24,7 @@ const HEATING_SHARE = 0.01;
 /** Times closer than this part of the stage are one. */
 const SAME_TIME = 1e-9;
 /** Pieces kept of a stage. */
-export const PIECES = 512;
+const PIECES = 512;
 
 interface Piece {
   from: number;
