@@ -27,8 +27,14 @@ const CHROMIUM_SWITCHES = [
   '--disable-sync',
 ];
 
-/** The app in a headless Chromium, from the product's own server; `search` is the page's ("?sample=…"). */
-export async function launchChromium(search = ''): Promise<Launched & { context: BrowserContext; url: string }> {
+/**
+ * The app in a headless Chromium, from the product's own server; `search` is the page's ("?sample=…"). `withoutPickers` takes
+ * the file pickers away, as in a browser that has none.
+ */
+export async function launchChromium(
+  search = '',
+  { withoutPickers = false } = {},
+): Promise<Launched & { context: BrowserContext; url: string }> {
   const executablePath = findChromium();
   if (executablePath === null) throw new Error('Chromium is not on this machine');
   const server = await serveApp(join(root, 'out/app'), 0);
@@ -36,6 +42,8 @@ export async function launchChromium(search = ''): Promise<Launched & { context:
   const context = await browser.newContext({ viewport: { width: 1440, height: 900 }, acceptDownloads: true });
   const page = await context.newPage();
   const complaints = gather(page);
+  if (withoutPickers)
+    await page.addInitScript(() => Object.assign(window, { showOpenFilePicker: undefined, showSaveFilePicker: undefined }));
   await page.goto(server.url + search);
   return {
     page,
@@ -87,4 +95,13 @@ function gather(page: Page): string[] {
   page.on('console', (message) => void (message.type() === 'error' && complaints.push(message.text())));
   page.on('pageerror', (error) => complaints.push(String(error)));
   return complaints;
+}
+
+/** From now on the person answers every file dialog with this path; null closes it. */
+export async function chooseInDialogs({ app }: LaunchedElectron, path: string | null): Promise<void> {
+  await app.evaluate(({ dialog }, path) => {
+    const canceled = path === null;
+    dialog.showOpenDialog = async () => ({ canceled, filePaths: path === null ? [] : [path] });
+    dialog.showSaveDialog = async () => ({ canceled, filePath: path ?? '' });
+  }, path);
 }
