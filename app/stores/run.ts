@@ -60,10 +60,13 @@ export const useRunStore = defineStore('run', () => {
   let waitingTimer: ReturnType<typeof setTimeout> | undefined;
   watch(
     state,
-    (now) => {
-      clearTimeout(waitingTimer);
-      if (now === 'live') waiting.value = false;
-      else if (!waiting.value) waitingTimer = setTimeout(() => (waiting.value = true), SHOW_WAITING_MS);
+    (now, before) => {
+      if (now === 'live') {
+        clearTimeout(waitingTimer);
+        waiting.value = false;
+      } else if (before === 'live' || before === undefined) {
+        waitingTimer = setTimeout(() => (waiting.value = true), SHOW_WAITING_MS);
+      }
     },
     { flush: 'sync', immediate: true },
   );
