@@ -7,7 +7,7 @@ const readme = readFileSync(new URL('../../../README.md', import.meta.url), 'utf
 
 describe('the example file in README.md', () => {
   it('is a plan that runs and meets its requirement', () => {
-    const example = /```jsonc\n([\s\S]*?)```/.exec(readme)?.[1] ?? '';
+    const example = /```json\n([\s\S]*?)```/.exec(readme)?.[1] ?? '';
     const read = readProject(example);
     if (read.kind !== 'project') throw new Error(JSON.stringify(read));
     const { outcome, answers } = solve(read.project);
