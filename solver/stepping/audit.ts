@@ -7,7 +7,7 @@ const sumOf = (values: Float64Array): number => values.reduce((sum, value) => su
 export class Audit {
   private readonly system: HeatSystem;
   private readonly state: HeatState;
-  private readonly storedAtStart: number;
+  private readonly storedAtStart: Float64Array;
   private readonly counted: Float64Array;
   private exchanged = 0;
   private largestLag = 0;
@@ -15,7 +15,7 @@ export class Audit {
   constructor(system: HeatSystem, state: HeatState) {
     this.system = system;
     this.state = state;
-    this.storedAtStart = sumOf(state.stored);
+    this.storedAtStart = Float64Array.from(state.stored);
     this.counted = new Float64Array(system.heats);
   }
 
@@ -46,12 +46,15 @@ export class Audit {
 
   /**
    * `stored` and `through` in J per basis since the start. Closure: |ΔE − ΣQ| / Σ|Q|, the last sum over all tracked heats and
-   * steps, so that a cycle that gives back what it took has one too; 0 if nothing was exchanged. `lag` in K, the largest so far.
+   * steps, so that a cycle that gives back what it took has one too; 0 if nothing was exchanged. A millionth of the heat that
+   * moved inside is added to it: of less exchange than that, ΔE is rounding. `lag` in K, the largest so far.
    */
   figures(time: number): { stored: number; through: Float64Array; closure: number; lag: number } {
-    const { state, exchanged } = this;
-    const stored = sumOf(state.stored) - this.storedAtStart;
-    const closure = exchanged > 0 ? Math.abs(stored - sumOf(state.through)) / exchanged : 0;
+    const { state, exchanged, storedAtStart } = this;
+    const changes = state.stored.map((value, row) => value - storedAtStart[row]);
+    const stored = sumOf(changes);
+    const moved = sumOf(changes.map(Math.abs));
+    const closure = exchanged > 0 ? Math.abs(stored - sumOf(state.through)) / (exchanged + 1e-6 * moved) : 0;
     return { stored, through: Float64Array.from(state.through), closure, lag: this.lagUpTo(time) };
   }
 }
