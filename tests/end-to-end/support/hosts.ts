@@ -19,7 +19,7 @@ export interface Launched {
   close(): Promise<void>;
 }
 
-const CHROMIUM_SWITCHES = [
+export const CHROMIUM_SWITCHES = [
   '--no-sandbox', // as root there is none
   '--disable-gpu',
   '--disable-quic',
