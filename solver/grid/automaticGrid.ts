@@ -2,7 +2,7 @@
  * The grid of the automatic scheme: spacing from the wanted accuracy and from how sharply the cycle acts.
  *
  * Lengths are counted in diffusion time^(1/2), σ = dx/√α, in which all layers are alike. With ε = accuracy / (2 × range of the
- * temperatures), a scheme of fourth order in space needs spacings that grow by b = 1.6 ε^(1/4) per distance from where the
+ * temperatures), a scheme of fourth order in space needs spacings that grow by b = 1.4 ε^(1/4) per distance from where the
  * profile is sharp (second order: 2 ε^(1/2)):
  *
  *   spacing(σ) = min over the sharp places (first spacing + b × distance),  at most b × the whole part
@@ -16,7 +16,7 @@ import type { PlainRows, WallGrid } from './wallGrid';
 import type { WallLayer } from './wallLayers';
 
 /** Growth b never exceeds this: neighbours then differ by less than 1.61, and the storage weights stay positive. */
-const LARGEST_GROWTH = 0.3;
+const LARGEST_GROWTH = 0.25;
 const EDGE_PART = 0.6;
 const FEWEST_ELEMENTS = 3;
 /** The first spacing at a sharp place need not resolve what is over after this part of the cycle, or of its shortest stage. */
@@ -103,7 +103,7 @@ export function plainRowsOf(demand: GridDemand, lengths: readonly Float64Array[]
 
 function spacingGrowth(accuracy: number, range: TemperatureRange, order: 2 | 4): number {
   const epsilon = (0.5 * accuracy) / Math.max(range.highest - range.lowest, accuracy);
-  return Math.min(LARGEST_GROWTH, order === 4 ? 1.6 * Math.sqrt(Math.sqrt(epsilon)) : 2 * Math.sqrt(epsilon));
+  return Math.min(LARGEST_GROWTH, order === 4 ? 1.4 * Math.sqrt(Math.sqrt(epsilon)) : 2 * Math.sqrt(epsilon));
 }
 
 const diffusivity = ({ curves, initial }: WallLayer): number => curves.conductivity(initial) / curves.heatCapacity(initial);

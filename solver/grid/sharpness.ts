@@ -132,23 +132,27 @@ function riseByFlux(layers: readonly WallLayer[], cycle: LaidCycle): { heating: 
   const surface = { heating: 0, cooling: 0 };
   for (const stage of cycle.stages) {
     const duration = stage.end - stage.start;
+    const perFlux = sum((layer) => surfaceRise(layer, duration));
     for (const face of FACES) {
       const exposure = stage.exposures[face];
       if (exposure.kind !== 'flux') continue;
       const other = resistanceToOutside(stage.exposures[face === 'start' ? 'end' : 'start']);
-      const { curves, initial } = face === 'start' ? layers[0] : layers[layers.length - 1];
-      const effusivity = Math.sqrt(curves.conductivity(initial) * curves.heatCapacity(initial));
       for (const way of ['heating', 'cooling'] as const) {
         const flux = Math.max(0, ...exposure.flux.value.map((value) => (way === 'heating' ? value : -value)));
         if (flux === 0) continue;
         rise[way] += Math.min((flux * duration) / capacity, flux * (resistance + other));
-        // A half space under constant flux; or the whole part in its steady state.
-        const half = (2 * flux * Math.sqrt(duration / Math.PI)) / effusivity;
-        surface[way] = Math.max(surface[way], Math.min(half, flux * resistance));
+        surface[way] = Math.max(surface[way], flux * perFlux);
       }
     }
   }
   return { heating: rise.heating + surface.heating, cooling: rise.cooling + surface.cooling };
+}
+
+/** Difference over a layer and its contact under a flux of 1 W/m² after some time, K: as a half space, or as in the steady state. */
+function surfaceRise({ curves, initial, thickness, contact }: WallLayer, duration: number): number {
+  const k = curves.conductivity(initial);
+  const half = 2 * Math.sqrt(duration / (Math.PI * k * curves.heatCapacity(initial)));
+  return Math.min(half, thickness / k) + contact;
 }
 
 /** Resistance between a face and what it meets, m²·K/W; Infinity where heat cannot leave. */

@@ -1,6 +1,7 @@
 /** Properties of any layered wall under any cycle, from random plans; a seed that fails once stays as a test of its own. */
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { stencilAt } from '../../solver/grid';
 import type { Exposure, Project, Settings } from '../../solver/model';
 import { createRun, type Run } from '../../solver/stepping';
 import { toTheEnd, wall, type LayerSpec, type StageSpec } from '../support';
@@ -38,25 +39,31 @@ const film: fc.Arbitrary<Exposure> = fc.record({
   coefficient: course(decades(0.1, 5000)),
   surroundings: course(temperature),
 });
+/** Without schedules: what happens within seconds is not for steps of 20 s. */
+const steadyFilm: fc.Arbitrary<Exposure> = fc.record({
+  kind: fc.constant('film' as const),
+  coefficient: decades(0.1, 5000),
+  surroundings: temperature,
+});
 const held: fc.Arbitrary<Exposure> = fc.record({ kind: fc.constant('temperature' as const), temperature: course(temperature) });
 const flux: fc.Arbitrary<Exposure> = fc.record({
   kind: fc.constant('flux' as const),
   flux: course(fc.integer({ min: -5000, max: 5000 })),
 });
 
-const stagesOf = (face: fc.Arbitrary<Exposure>): fc.Arbitrary<StageSpec[]> =>
-  fc.array(fc.record({ lasts: decades(10, 20000), start: face, end: face }), { minLength: 1, maxLength: 3 });
+const stagesOf = (face: fc.Arbitrary<Exposure>, shortest: number): fc.Arbitrary<StageSpec[]> =>
+  fc.array(fc.record({ lasts: decades(shortest, 20000), start: face, end: face }), { minLength: 1, maxLength: 3 });
 
 interface Plan {
   layers: LayerSpec[];
   initial: number[];
   stages: StageSpec[];
 }
-const planWith = (face: fc.Arbitrary<Exposure>): fc.Arbitrary<Plan> =>
+const planWith = (face: fc.Arbitrary<Exposure>, shortest = 10): fc.Arbitrary<Plan> =>
   fc.record({
     layers: fc.array(layer, { minLength: 1, maxLength: 6 }),
     initial: fc.array(temperature, { minLength: 6, maxLength: 6 }),
-    stages: stagesOf(face),
+    stages: stagesOf(face, shortest),
   });
 
 const projectOf = ({ layers, initial, stages }: Plan, settings: Partial<Settings>): Project =>
@@ -94,6 +101,34 @@ function ran(project: Project): Ran {
   return { run, lowest, highest, last };
 }
 
+/**
+ * Temperatures at both edges and inside every layer, at forty equal times; none where a thousandth of the cycle ago anything
+ * jumped or bent, for that is more than an automatic grid resolves.
+ */
+function courses(project: Project): number[][] {
+  const rows: number[][] = [];
+  const run = createRun(project, (step) => {
+    for (;;) {
+      const time = ((rows.length + 1) * run.cycle.end) / 40;
+      if (rows.length === 40 || time > step.to * (1 + 1e-12)) return;
+      const fraction = Math.min(1, (time - step.from) / (step.to - step.from));
+      rows.push(stencils.map(({ points, weights }) => step.combinationAt(points, weights, fraction)));
+    }
+  });
+  let edge = 0;
+  const stencils = project.part.layers.flatMap(({ thickness }, layer) => {
+    const from = edge;
+    edge += thickness;
+    return [0, 0.3, 0.9, 1].map((place) => stencilAt(run.points, from + place * thickness, layer));
+  });
+  expect(toTheEnd(run).reason).toBe('finished');
+  const { stages, end } = run.cycle;
+  const lines = stages.flatMap(({ exposures }) => [...Object.values(exposures.start), ...Object.values(exposures.end)]);
+  const edges = lines.flatMap((line) => (typeof line === 'object' ? line.time : []));
+  const early = (time: number): boolean => edges.some((edge) => time >= edge && time - edge < 1e-3 * end);
+  return rows.filter((_, i) => !early(((i + 1) * end) / 40));
+}
+
 /** Everything that is met, °C. */
 function met({ layers, initial, stages }: Plan): [number, number] {
   const values = initial.slice(0, layers.length);
@@ -122,7 +157,7 @@ function expectBetween({ lowest, highest }: Ran, plan: Plan, slack: number): voi
   expect(lowest).toBeGreaterThan(least - slack);
   expect(highest).toBeLessThan(most + slack);
 }
-const expectKept = ({ run }: Ran): void => expect(run.energy().closure).toBeLessThan(1e-9);
+const expectKept = ({ run }: Ran, closure = 1e-9): void => expect(run.energy().closure).toBeLessThan(closure);
 const longestStage = ({ stages }: Plan): number => Math.max(...stages.map(({ lasts }) => lasts));
 
 describe(`any wall under any cycle, seed ${SEED}`, () => {
@@ -182,7 +217,21 @@ describe(`any wall under any cycle, seed ${SEED}`, () => {
       80,
       fc.property(planWith(anyFace), decades(0.005, 2), fc.integer({ min: 0, max: 6 }), (plan, part, dampedSteps) => {
         const step = longestStage(plan) * part;
-        expectKept(ran(projectOf(plan, { scheme: 'crankNicolson', step, dampedSteps, grid: { nodes: 5 } })));
+        // Undamped, it sends the heat of a jump to and fro through the stiffest contact at every step; rounding grows with it.
+        const closure = dampedSteps === 0 ? 1e-7 : 1e-9;
+        expectKept(ran(projectOf(plan, { scheme: 'crankNicolson', step, dampedSteps, grid: { nodes: 5 } })), closure);
+      }),
+    );
+  });
+
+  it('is within the accuracy asked for of a solution that is far finer, under the automatic scheme', () => {
+    check(
+      60,
+      fc.property(planWith(anyFace), fc.constantFrom(3, 1, 0.3), (plan, accuracy) => {
+        const [found, fine] = [accuracy, accuracy / 30].map((wanted) => courses(projectOf(plan, { accuracy: wanted })));
+        let worst = 0;
+        found.forEach((row, i) => row.forEach((value, j) => (worst = Math.max(worst, Math.abs(value - fine[i][j])))));
+        expect(worst).toBeLessThan(accuracy);
       }),
     );
   });
@@ -190,12 +239,12 @@ describe(`any wall under any cycle, seed ${SEED}`, () => {
   it('comes to the same end by two schemes on one grid', () => {
     check(
       20,
-      fc.property(planWith(film), (plan) => {
+      fc.property(planWith(steadyFilm, 5000), (plan) => {
         const grid = { cells: 12 };
-        const total = plan.stages.reduce((sum, { lasts }) => sum + lasts, 0);
+        const step = 20;
         const [least, most] = met(plan);
         const fine = ran(projectOf(plan, { accuracy: 0.01, grid })).last;
-        const rough = ran(projectOf(plan, { scheme: 'crankNicolson', step: total / 1000, grid })).last;
+        const rough = ran(projectOf(plan, { scheme: 'crankNicolson', step, grid })).last;
         fine.forEach((value, i) => expect(Math.abs(value - rough[i])).toBeLessThan(0.02 * (most - least) + 0.1));
       }),
     );

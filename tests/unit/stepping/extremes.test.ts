@@ -145,6 +145,12 @@ describe('what is said of a run', () => {
     expect(codes({ settings: { accuracy: 0.01 } })).toEqual([]);
   });
 
+  it('warns of a step that is long beside a piece of the cycle', () => {
+    const settings: Partial<Settings> = { scheme: 'implicit', grid: { nodes: 4 } };
+    expect(codes({ lasts: 100, settings: { ...settings, step: 60 } })).toEqual(['few-steps']);
+    expect(codes({ lasts: 100, settings: { ...settings, step: 50 } })).toEqual([]);
+  });
+
   it('warns of an explicit step that is stable and can overshoot', () => {
     const settings: Partial<Settings> = { scheme: 'explicit', grid: { nodes: 4 } };
     const of = (step: number): Absurd => ({ start: film(2000, 500), lasts: 600, settings: { ...settings, step } });
