@@ -42,3 +42,4 @@ export { default as ChartTwin } from './ChartTwin.vue';
 export { default as DragHandle } from './DragHandle.vue';
 export { useHold, type Hold } from './useHold';
 export { useSize } from './useSize';
+export { moveTo, showIf, writeAttribute, writeText } from './live';

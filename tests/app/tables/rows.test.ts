@@ -139,10 +139,10 @@ describe('exposures', () => {
 describe('probes', () => {
   it('say how and where they are placed', () => {
     expect(probeRows(plan, 'SI').map(texts)).toEqual([
-      ['Face', 'face', 'Hot face', '0 mm'],
-      ['Middle', 'part of a layer', 'Backing', '0.5'],
-      ['Behind', 'side of an interface', 'Backing | Shell: in Shell', '225 mm'],
-      ['Deep', 'depth', 'from the start face', '200 mm'],
+      ['Face', 'at a face', 'Hot face', '0 mm'],
+      ['Middle', 'in a layer', 'Backing', '0.5'],
+      ['Behind', 'at an interface', 'in Shell, at Backing', '225 mm'],
+      ['Deep', 'at a depth', 'from Hot face', '200 mm'],
     ]);
   });
 

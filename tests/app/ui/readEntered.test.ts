@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { readEntered, shownNumber } from '../../../app/ui/readEntered';
+import { readEntered, shownInCell, shownNumber } from '../../../app/ui/readEntered';
 
 const thickness = { name: 'Thickness', quantity: 'length' as const, bounds: { above: 0 } };
 const contact = { name: 'Contact', quantity: 'contactResistance' as const, bounds: { atLeast: 0 }, zero: 'bonded' };
@@ -37,4 +37,17 @@ describe('a typed quantity', () => {
     expect(shownNumber(0, contact, 'SI').text).toBe('bonded');
     expect(shownNumber(0.004, contact, 'SI').text).toBe('0.004 m²·K/W');
   });
+});
+
+describe('a number in a cell', () => {
+  it('is shown in full where it is short, and rounded where it comes from a conversion', () => {
+    expect(shownInCell(0.0254 * 12.0625, thickness, 'US').text).toBe('12.06 in');
+    expect(shownInCell(0.0254 * 3.125, thickness, 'US').text).toBe('3.125 in');
+    expect(shownInCell(0.16, thickness, 'US').text).toBe('6.299 in');
+    expect(shownInCell(0.1525, thickness, 'SI').text).toBe('152.5 mm');
+    expect(shownInCell(1234.5, { name: 'Density', quantity: 'density' }, 'SI').text).toBe('1234.5 kg/m³');
+  });
+
+  it('keeps a time whole', () =>
+    expect(shownInCell(123456, { name: 'Time', quantity: 'time' }, 'SI').text).toBe('34 h 17 min 36 s'));
 });
