@@ -16,5 +16,7 @@ export interface SectionGeometry {
 /** Room for axis and surroundings at the left, surroundings at the right, names above, strip and depths below. */
 export const MARGIN = { left: 116, right: 108, top: 40, bottom: 52 } as const;
 export const STRIP = 18;
+/** Width of the words beside a face. */
+export const SIDE = 68;
 /** No layer is drawn narrower: thinner ones could be neither seen nor taken hold of. */
 export const LEAST_LAYER = 6;

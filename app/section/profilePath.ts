@@ -1,5 +1,5 @@
 /** Profiles as paths over the layers as they are drawn. */
-import type { Frames } from '../../solver/model';
+import type { Frames, Project } from '../../solver/model';
 import { linePath, type LayerRow, type Scale } from '../draw';
 
 /** Pixel across of every point of the frames: at the same part of its layer, so that it follows a layer that is being edited. */
@@ -74,3 +74,7 @@ export function sampleAcross(
   }
   return out;
 }
+
+/** Conductivity of every layer, W/(m·K). */
+export const conductivities = ({ part, materials }: Project): number[] =>
+  part.layers.map(({ material }) => materials.find(({ id }) => id === material)?.conductivity ?? Number.NaN);

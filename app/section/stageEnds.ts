@@ -4,11 +4,18 @@ import { indexAt, profileAt, textWidth, type Box } from '../draw';
 import type { SectionGeometry } from './geometry';
 import { profilePath } from './profilePath';
 
+export interface StageEndName {
+  text: string;
+  x: number;
+  y: number;
+  box: Box;
+}
+
 export interface StageEndProfile {
   id: string;
   path: string;
   /** Null where it would lie on another name. */
-  name: { text: string; x: number; y: number; box: Box } | null;
+  name: StageEndName | null;
 }
 
 /** Profiles drawn at most: the latest ones. */

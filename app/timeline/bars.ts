@@ -52,12 +52,18 @@ function answeredRow(requirement: Requirement, answer: Answer, system: UnitSyste
     requirement: requirement.id,
     name: requirement.name,
     verdict: answer.verdict,
-    spans: answer.spans,
+    spans: looksOf(requirement, answer.spans),
     note,
     mark: covered ? null : answer.time_s,
     sentence: `${requirement.name}: ${VERDICT_WORDS[answer.verdict].toLowerCase()}${when}${note === null ? '' : `, ${note.text}`}`,
   };
 }
+
+/** A limit that is kept is a quiet tint all along; solid is what was asked for and came true. */
+const looksOf = ({ must }: Requirement, spans: readonly Span[]): Span[] =>
+  spans.map((span) =>
+    span.kind === 'fulfilled' && (must.kind === 'staysBelow' || must.kind === 'staysAbove') ? { ...span, kind: 'holding' } : span,
+  );
 
 /** One short remark a row: how long a limit was broken, when it was met, or how close it came. */
 function noteOf({ must }: Requirement, answer: Answer, system: UnitSystem): BarNote | null {

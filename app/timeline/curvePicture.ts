@@ -22,6 +22,8 @@ import { worstBeyond, type Curves, type Series } from './series';
 /** Columns at which curves are looked at to keep words off them. */
 const COLUMNS = 64;
 const TEXT_HEIGHT = 12;
+/** A limit that counts at one instant is still a line, px. */
+const LEAST_LINE = 12;
 
 export interface Plot {
   time: Scale;
@@ -55,9 +57,10 @@ export interface LimitLine {
 export function limitLines({ limits }: Curves, { time, value, width }: Plot, drawn: DrawnCurves): LimitLine[] {
   const taken: Box[] = [];
   return limits.flatMap((limit, index) => {
-    const from = Math.max(0, time.at(limit.from));
-    const to = Math.min(width, time.at(limit.to));
-    if (to < from) return [];
+    const short = Math.max(0, LEAST_LINE - (time.at(limit.to) - time.at(limit.from))) / 2;
+    const from = Math.max(0, time.at(limit.from) - short);
+    const to = Math.min(width, time.at(limit.to) + short);
+    if (to <= from) return [];
     const line = { from, to, y: value.at(limit.value) };
     const size = { width: textWidth(limit.text), height: TEXT_HEIGHT };
     const label = placeLineLabel(line, size, { ...drawn, taken });

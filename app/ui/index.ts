@@ -11,6 +11,7 @@ export { default as SheetSection } from './SheetSection.vue';
 export { default as Sign } from './Sign.vue';
 export { default as TextField } from './TextField.vue';
 export { type Cell, type Column, type Row } from './grid/cells';
+export { problemInUnits } from './problemInUnits';
 export { type QuantitySpec } from './readEntered';
 export { tintNumber, tintOf } from './tint';
 export {
