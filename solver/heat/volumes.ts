@@ -3,7 +3,7 @@
  *
  *   C[i] dT[i]/dt = Σ G (T[neighbour] − T[i])      C [J/(m²·K)], G [W/(m²·K)]
  *
- * Symmetric by construction. A node with imposed temperature has no row.
+ * Symmetric by construction. A node whose temperature is held has no row.
  */
 import type { WallGrid, WallLayer } from '../grid';
 import type { LaidExposure, LaidStage } from '../model';
@@ -60,9 +60,9 @@ export function wallVolumes(layers: readonly WallLayer[], grid: WallGrid, exposu
   }
   loss[0] += faceConductance(exposures.start, rows.faceResistance.start);
   loss[rows.size - 1] += faceConductance(exposures.end, rows.faceResistance.end);
-  const imposed = (exposure: LaidExposure): boolean => exposure.kind === 'temperature' && grid.kind === 'nodes';
-  const first = imposed(exposures.start) ? 1 : 0;
-  const end = imposed(exposures.end) ? rows.size - 1 : rows.size;
+  const held = (exposure: LaidExposure): boolean => exposure.kind === 'temperature' && grid.kind === 'nodes';
+  const first = held(exposures.start) ? 1 : 0;
+  const end = held(exposures.end) ? rows.size - 1 : rows.size;
   const free = <T extends Float64Array | Int32Array>(column: T): T => column.subarray(first, Math.max(first, end)) as T;
   return { capacity: free(capacity), loss: free(loss), beside: free(beside), layer: free(layer), depth: free(depth) };
 }
@@ -70,6 +70,6 @@ export function wallVolumes(layers: readonly WallLayer[], grid: WallGrid, exposu
 /** Largest conductance of a face in a stage, W/(m²·K). */
 function faceConductance(exposure: LaidExposure, resistance: number): number {
   if (exposure.kind === 'film') return 1 / (1 / Math.max(...exposure.coefficient.value) + resistance);
-  // Imposed where the node is the face itself.
+  // Held where the node is the face itself: no conductance.
   return exposure.kind === 'temperature' && resistance > 0 ? 1 / resistance : 0;
 }

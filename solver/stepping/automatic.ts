@@ -32,7 +32,7 @@ const LOCAL_PART = 0.3;
 /**
  * The stock method takes the last stage alone as the error. Where dF/du changes within a step (a film coefficient on a steep ramp)
  * that stage can vanish by luck while the one before is large: an error of five accuracies went through. This part of the
- * stage before counts as well; where dF/du is constant it never decides.
+ * stage before counts as well; where dF/du is constant it did not decide in any problem measured.
  */
 const STAGE_BEFORE_PART = 0.2;
 /** After a jump, the row that it hits hardest may move by this many local errors in the first step. */
