@@ -31,11 +31,11 @@ export const CHROMIUM_SWITCHES = [
 
 /**
  * The app in a headless Chromium, from the product's own server; `search` is the page's ("?sample=…"). `withoutPickers` takes
- * the file pickers away, as in a browser that has none.
+ * the file pickers away, as in a browser that has none; `blank` leaves the opening to the caller.
  */
 export async function launchChromium(
   search = '',
-  { withoutPickers = false } = {},
+  { withoutPickers = false, blank = false } = {},
 ): Promise<Launched & { context: BrowserContext; url: string }> {
   const executablePath = findChromium();
   if (executablePath === null) throw new Error('Chromium is not on this machine');
@@ -46,7 +46,7 @@ export async function launchChromium(
   const complaints = gather(page);
   if (withoutPickers)
     await page.addInitScript(() => Object.assign(window, { showOpenFilePicker: undefined, showSaveFilePicker: undefined }));
-  await page.goto(server.url + search);
+  if (!blank) await page.goto(server.url + search);
   return {
     page,
     context,
@@ -101,6 +101,8 @@ export async function launchElectron(args: string[] = [], userData?: string): Pr
 }
 
 export interface Unattended {
+  /** When the program was launched, ms as Date.now() tells. */
+  readonly began: number;
   /** Attaches to the page that is there now. */
   attach(): Promise<{ page: Page; detach(): Promise<void> }>;
   /** Kills the process that draws the page. */
@@ -114,6 +116,7 @@ export async function launchUnattended(args: string[] = []): Promise<Unattended>
   if (runtime.kind === 'missing') throw new Error(`the test runtime of Electron is not here: ${runtime.reason}`);
   const screen = await startScreen();
   const settings = await mkdtemp(join(tmpdir(), 'soakwright-settings-'));
+  const began = Date.now();
   const program = spawn(
     join(runtime.folder, 'electron'),
     ['--no-sandbox', '--disable-gpu', '--remote-debugging-port=0', `--user-data-dir=${settings}`, root, ...args],
@@ -128,6 +131,7 @@ export async function launchUnattended(args: string[] = []): Promise<Unattended>
     });
   });
   return {
+    began,
     async attach() {
       const browser = await chromium.connectOverCDP(address);
       const [context] = browser.contexts();
