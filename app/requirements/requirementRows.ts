@@ -25,8 +25,8 @@ import type { UnitSystem } from '../../solver/model/quantities';
 export const REQUIREMENT_COLUMNS: readonly Column[] = [
   { head: '' },
   { head: 'Limit', width: '13.5%', align: 'right' },
-  { head: 'Counts', width: '35%' },
-  { head: 'Verdict', width: '17.5%' },
+  { head: 'Counts', width: '33.5%' },
+  { head: 'Verdict', width: '19%' },
 ];
 
 /** Verdicts that are too long for their column. */

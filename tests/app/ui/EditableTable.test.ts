@@ -295,5 +295,5 @@ it('a cell whose number the plan cannot have is marked, with the reason below', 
   broken.part.layers = broken.part.layers.map((layer, index) => (index === 1 ? { ...layer, thickness: -1 } : layer));
   const { table, cell } = open(broken);
   expect(cell(1, 2).attributes('aria-invalid')).toBe('true');
-  expect(table.get('.table-said').text()).toBe('Thickness of Backing must be more than 0 m, got -1');
+  expect(table.get('.table-said').text()).toBe('Thickness of Backing must be more than 0 mm, got −1000 mm');
 });

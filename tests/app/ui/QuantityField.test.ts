@@ -100,7 +100,7 @@ describe('a quantity field', () => {
 
   it('shows what is wrong with the number in the plan', async () => {
     const field = mount(QuantityField, { props: { spec, value: 9, system: 'SI', problem: 'must be at most 1 m, got 9' } });
-    expect(field.text()).toContain('Thickness must be at most 1 m, got 9');
+    expect(field.text()).toContain('Thickness must be at most 1000 mm, got 9000 mm');
     expect(field.get('input').attributes('aria-invalid')).toBe('true');
   });
 });

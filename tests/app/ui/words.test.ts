@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { marginInWords, placeInWords, requirementInWords, verdictNow, whereInWords } from '../../../app/ui';
+import { marginInWords, placeInWords, problemInUnits, requirementInWords, verdictNow, whereInWords } from '../../../app/ui';
 import type { Answer, Requirement } from '../../../solver/model';
 import { lining } from '../support/lining';
 
@@ -87,5 +87,22 @@ describe('an answer in words', () => {
 
   it('never calls a margin thin as long as its uncertainty is unknown', () => {
     expect(verdictNow({ ...answer, margin: 0.001 }, { state: 'live', waiting: false }).sign).toBe('met');
+  });
+});
+
+describe('a problem on screen', () => {
+  it('speaks in the units that are shown', () => {
+    expect(problemInUnits('must be more than 0 m, got -0.004', 'SI')).toBe('must be more than 0 mm, got −4 mm');
+    expect(problemInUnits('must be at most 0.0254 m, the thickness of the part, got 0.0508', 'US')).toBe(
+      'must be at most 1 in, the thickness of the part, got 2 in',
+    );
+    expect(problemInUnits('must be more than -273.15 °C, got -300', 'SI')).toBe('must be more than −273.15 °C, got −300 °C');
+    expect(problemInUnits('must be more than 0 W/(m·K), got 0', 'SI')).toBe('must be more than 0 W/m·K, got 0 W/m·K');
+    expect(problemInUnits('must be more than 0 kg/m³, got -1', 'SI')).toBe('must be more than 0 kg/m³, got −1 kg/m³');
+  });
+
+  it('without a quantity stays as it is', () => {
+    const message = 'must be the id of a probe of this plan, got "m 4"';
+    expect(problemInUnits(message, 'US')).toBe(message);
   });
 });
