@@ -136,7 +136,11 @@ const settle = (page: Page): Promise<void> => page.waitForTimeout(600);
 
 /** At the slowest speed, so that it does not come to the end. */
 async function play(page: Page): Promise<void> {
-  await page.getByRole('radiogroup', { name: /^Speed/ }).getByRole('radio').first().click();
+  await page
+    .getByRole('radiogroup', { name: /^Speed/ })
+    .getByRole('radio')
+    .first()
+    .click();
   await page.getByRole('button', { name: 'To the start' }).click();
   await page.getByRole('button', { name: 'Play', exact: true }).click();
   await page.waitForTimeout(PLAY_MS);
