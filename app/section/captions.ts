@@ -39,11 +39,12 @@ export function captionsOf(layers: readonly CaptionLayer[], overhang: number): C
     ].filter((text) => text.name !== '' || text.thickness !== '');
     const widthOf = (text: { name: string; thickness: string }): number =>
       textWidth(`${text.name}${text.name && text.thickness ? '  ' : ''}${text.thickness}`, SIZE);
+    const leans = layer === layers.length - 1 && widthOf(texts[0]) <= room + overhang;
     const fits = texts.find((text) => widthOf(text) + AIR <= room);
-    if (fits?.name === name) {
+    if (fits?.name === name && (fits.thickness === thickness || !leans)) {
       return [{ layer, ...fits, x: (left + right) / 2, anchor: 'middle', airy: room - widthOf(fits) > 2 * AIRY }];
     }
-    if (layer === layers.length - 1 && widthOf(texts[0]) <= room + overhang) {
+    if (leans) {
       return [{ layer, ...texts[0], x: left + 4, anchor: 'start', airy: false }];
     }
     return fits === undefined ? [] : [{ layer, ...fits, x: (left + right) / 2, anchor: 'middle', airy: false }];

@@ -17,8 +17,17 @@ export function sectionSentence(plan: Project | null, frames: Frames | null, tim
   return `Section through ${layers}. Temperature at ${formatDuration(time)}: ${faces.join(', ')}.`;
 }
 
-/** The profile at a time, with the lowest and highest so far and the fluxes through the faces. */
-export function sectionTable(plan: Project | null, frames: Frames | null, time: number, system: UnitSystem): DataTable {
+/**
+ * The profile at a time, with the lowest and highest so far and the fluxes through the faces: at all points, or only at the
+ * edges of the layers.
+ */
+export function sectionTable(
+  plan: Project | null,
+  frames: Frames | null,
+  time: number,
+  system: UnitSystem,
+  edgesOnly = false,
+): DataTable {
   const temperature = displayUnit('temperature', system);
   const columns = [
     'Layer',
@@ -48,5 +57,7 @@ export function sectionTable(plan: Project | null, frames: Frames | null, time: 
       through === null ? null : toDisplay(through, 'heatFlux', system),
     ];
   });
-  return { caption, columns, rows };
+  const starts = new Set(frames.layerStart);
+  const isEdge = (_: unknown, i: number): boolean => starts.has(i) || starts.has(i + 1);
+  return { caption, columns, rows: edgesOnly ? rows.filter(isEdge) : rows };
 }

@@ -1,8 +1,8 @@
 /** Rows of the requirement lane: spans of the time axis, and what is said beside them. */
 import { type Answer, type LaidCycle, type Project, type Requirement, type Span, type Verdict } from '../../solver/model';
-import { formatDuration, formatQuantity, type UnitSystem } from '../../solver/model/quantities';
+import { formatDuration, type UnitSystem } from '../../solver/model/quantities';
 import type { Answered } from '../../solver/service/protocol';
-import { VERDICT_WORDS } from '../ui';
+import { differenceInWords, temperatureInWords, VERDICT_WORDS } from '../ui';
 import { countingWindow } from './series';
 
 export interface BarNote {
@@ -82,9 +82,10 @@ function noteOf({ must }: Requirement, answer: Answer, system: UnitSystem): BarN
     return { time: answer.time_s, from: answer.time_s, text: `reached ${formatDuration(answer.time_s)}`, tone: 'met' };
   }
   if (answer.value === null || answer.time_s === null) return null;
-  const kind = answer.unit === 'K' ? 'temperatureDifference' : answer.unit === 's' ? 'time' : 'temperature';
   const value =
-    kind === 'time' ? formatDuration(answer.value) : formatQuantity(answer.value, kind, system, { significant: 4 }).text;
-  const words = kind === 'time' ? 'longest' : 'closest';
+    answer.unit === 's'
+      ? formatDuration(answer.value)
+      : (answer.unit === 'K' ? differenceInWords : temperatureInWords)(answer.value, system);
+  const words = answer.unit === 's' ? 'longest' : 'closest';
   return { time: answer.time_s, from: answer.time_s, text: `${words} ${value}`, tone: answer.met === false ? 'not' : 'plain' };
 }

@@ -38,6 +38,8 @@ type Dataset = ChartDataset<'line', { x: number; y: number }[]>;
 
 /** Room beyond the plot in which a line at its very edge keeps its full width, px. */
 const CLIP = 2;
+/** Least pixels of the canvas a pixel of the page: a saved picture is drawn at this size. */
+const SHARP = 2;
 
 export function createCurveChart(canvas: HTMLCanvasElement): CurveChart {
   const chart = new Chart<'line', { x: number; y: number }[]>(canvas, {
@@ -61,7 +63,7 @@ export function createCurveChart(canvas: HTMLCanvasElement): CurveChart {
       chart.data.datasets = lines.map(dataset);
       Object.assign(chart.options.scales?.x ?? {}, { min: from, max: to });
       Object.assign(chart.options.scales?.y ?? {}, { min: low, max: high });
-      chart.options.devicePixelRatio = window.devicePixelRatio;
+      chart.options.devicePixelRatio = Math.max(SHARP, window.devicePixelRatio);
       chart.resize(width, height);
       chart.update('none');
     },

@@ -1,7 +1,7 @@
 /** What keys do while the timeline has the focus. */
 
 export type TimelineAction =
-  'play' | 'frameBack' | 'frameOn' | 'eventBack' | 'eventOn' | 'start' | 'end' | 'zoomIn' | 'zoomOut' | 'whole';
+  'play' | 'frameBack' | 'frameOn' | 'eventBack' | 'eventOn' | 'start' | 'end' | 'zoomIn' | 'zoomOut' | 'whole' | 'stage';
 
 type Key = Pick<KeyboardEvent, 'key' | 'shiftKey' | 'ctrlKey' | 'altKey' | 'metaKey'>;
 
