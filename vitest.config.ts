@@ -8,7 +8,13 @@ const project = (name: string, more: object = {}) => ({
 });
 
 /** The real window and the real browser: one at a time, and slow machines are not failures. */
-const endToEnd = { testTimeout: 120_000, hookTimeout: 180_000, fileParallelism: false, maxWorkers: 1 };
+const endToEnd = {
+  testTimeout: 180_000,
+  hookTimeout: 180_000,
+  expect: { poll: { timeout: 30_000 } },
+  fileParallelism: false,
+  maxWorkers: 1,
+};
 
 export default defineConfig({
   plugins: [vue()],

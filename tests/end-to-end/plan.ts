@@ -21,7 +21,7 @@ const LIMIT = 'requirements[0].must.limit';
 const SET_POINT = 'Furnace in Up to 1020 °C';
 /** Longer than the app waits before it solves after an edit, and before it says that it solves. */
 const QUIET_MS = 450;
-const SLOW = { timeout: 30_000 };
+const SLOW = { timeout: 60_000 };
 
 export function describePlan(hands: () => Hands): void {
   const page = (): Page => hands().page;

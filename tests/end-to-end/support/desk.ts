@@ -25,7 +25,7 @@ export async function retitle(page: Page, title: string): Promise<void> {
 /** Waits until the page shows a text. */
 export async function expectText(page: Page, text: string): Promise<void> {
   const shows = (): Promise<boolean> => page.evaluate((text) => document.body.innerText.includes(text), text);
-  await expect.poll(shows, { timeout: 20_000, message: `the page shows “${text}”` }).toBe(true);
+  await expect.poll(shows, { timeout: 60_000, message: `the page shows “${text}”` }).toBe(true);
 }
 
 /** The journal is written a little after an edit, so that typing is not slowed down. */
