@@ -17,18 +17,18 @@ import type { UnitSystem } from '../../solver/model/quantities';
 
 export const PROBE_COLUMNS: readonly Column[] = [
   { head: '' },
-  { head: 'Placed', width: '19%' },
+  { head: 'Placed by', width: '19%' },
   { head: 'Where', width: '36%' },
   { head: 'Place', width: '14%', align: 'right' },
 ];
 
 type PlaceKind = 'depth' | 'part' | 'layer' | 'face' | 'interface';
 const PLACE_KINDS: readonly { value: PlaceKind; label: string }[] = [
-  { value: 'face', label: 'at a face' },
-  { value: 'depth', label: 'at a depth' },
-  { value: 'part', label: 'in the part' },
-  { value: 'layer', label: 'in a layer' },
-  { value: 'interface', label: 'at an interface' },
+  { value: 'face', label: 'face' },
+  { value: 'depth', label: 'depth' },
+  { value: 'part', label: 'part' },
+  { value: 'layer', label: 'layer' },
+  { value: 'interface', label: 'interface' },
 ];
 
 export function placeKind(at: Place): PlaceKind {

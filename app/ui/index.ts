@@ -27,6 +27,7 @@ export {
   placeInWords,
   requirementInWords,
   requirementParts,
+  roundTime,
   stageName,
   subjectInWords,
   temperatureInWords,

@@ -79,7 +79,7 @@ export function requirementInWords(requirement: Requirement, project: Project, s
 }
 
 /** A time that was set, without its empty minutes: "6 h". */
-const roundTime = (seconds: number): string => formatDuration(seconds).replace(/ 00 (?:min|s|h)$/, '');
+export const roundTime = (seconds: number): string => formatDuration(seconds).replace(/ 00 (?:min|s|h)$/, '');
 
 /** "120 mm deep", "middle of Shell", "Hot face", "Lining side of Lining / Shell". */
 export function placeInWords(at: Place, project: Project, system: UnitSystem): string {

@@ -32,7 +32,7 @@ const choose = (cell: Cell, value: string): Command => {
 describe('stages', () => {
   it('say their course, their end and when that is', () => {
     const rows = stageRows(plan, laid, 'SI');
-    expect(texts(rows[0])).toEqual(['Heat', '2 segments to 525 °C, 6 h 00 min', 'at target', '6 h 00 min', '6 h 00 min']);
+    expect(texts(rows[0])).toEqual(['Heat', '2 segments to 525 °C, 6 h', 'at target', '6 h 00 min', '6 h 00 min']);
     expect(texts(rows[1])).toEqual(['Soak', 'holds', 'after a time', '2 h 00 min', '8 h 00 min']);
   });
 
@@ -81,9 +81,9 @@ describe('segments', () => {
 
   it('are said in words', () => {
     expect(courseInWords({ segments: [{ to: 180, rate: 20 / 3600 }] }, 20, 'SI')).toBe('to 180 °C at 20 K/h');
-    expect(courseInWords({ segments: [{ to: 180, duration: 10800 }] }, 20, 'SI')).toBe('to 180 °C in 3 h 00 min');
+    expect(courseInWords({ segments: [{ to: 180, duration: 10800 }] }, 20, 'SI')).toBe('to 180 °C in 3 h');
     expect(courseInWords({ segments: [{ to: 180, duration: 0 }] }, 20, 'US')).toBe('jumps to 356 °F');
-    expect(courseInWords({ segments: [{ hold: 60 }] }, 20, 'SI')).toBe('holds for 1 min 00 s');
+    expect(courseInWords({ segments: [{ hold: 60 }] }, 20, 'SI')).toBe('holds for 1 min');
     expect(courseInWords({ segments: [] }, 20, 'SI')).toBe('holds');
   });
 
@@ -139,10 +139,10 @@ describe('exposures', () => {
 describe('probes', () => {
   it('say how and where they are placed', () => {
     expect(probeRows(plan, 'SI').map(texts)).toEqual([
-      ['Face', 'at a face', 'Hot face', '0 mm'],
-      ['Middle', 'in a layer', 'Backing', '0.5'],
-      ['Behind', 'at an interface', 'in Shell, at Backing', '225 mm'],
-      ['Deep', 'at a depth', 'from Hot face', '200 mm'],
+      ['Face', 'face', 'Hot face', '0 mm'],
+      ['Middle', 'layer', 'Backing', '0.5'],
+      ['Behind', 'interface', 'in Shell, at Backing', '225 mm'],
+      ['Deep', 'depth', 'from Hot face', '200 mm'],
     ]);
   });
 
