@@ -41,8 +41,8 @@ export function otherCourses(project: Project, laid: LaidCycle): Course[] {
     const values = line.value.filter(Number.isFinite);
     if (values.length === 0 || (values.length === line.value.length && values.every((value) => value === values[0]))) continue;
     const twin = courses.find((course) => sameCourse(course.line, line));
-    if (twin === undefined) courses.push({ key: face, name: `At ${project.part.faces[face].name}`, line });
-    else twin.name = 'At both faces';
+    if (twin === undefined) courses.push({ key: face, name: project.part.faces[face].name, line });
+    else twin.name = 'Both faces';
   }
   return courses;
 }
