@@ -16,7 +16,6 @@ export { type QuantitySpec } from './readEntered';
 export { tintNumber, tintOf } from './tint';
 export {
   countOf,
-  countsInWords,
   depthInWords,
   differenceInWords,
   layerName,
