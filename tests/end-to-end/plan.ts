@@ -128,23 +128,24 @@ export function describePlan(hands: () => Hands): void {
     });
 
     it('plays its timeline and stops', async () => {
-      const now = (): Promise<string | null> =>
-        page()
-          .getByRole('slider', { name: /playhead/i })
-          .getAttribute('aria-valuenow');
+      const playhead = page().getByRole('slider', { name: /playhead/i });
+      const shown = (): Promise<string> => playhead.innerText();
+      const said = (): Promise<string | null> => playhead.getAttribute('aria-valuenow');
       // At the slowest speed, so that it does not come to its end meanwhile.
       await page()
         .getByRole('radiogroup', { name: /^Speed/ })
         .getByRole('radio')
         .first()
         .click();
-      const start = Number(await now());
+      const [shownAtFirst, saidAtFirst] = [await shown(), Number(await said())];
       await page().getByRole('button', { name: 'Play', exact: true }).click();
-      await expect.poll(async () => Number(await now())).toBeGreaterThan(start);
+      await expect.poll(shown, SLOW).not.toBe(shownAtFirst);
       await page().getByRole('button', { name: 'Pause' }).click();
-      const paused = await now();
+      // Read out once it rests.
+      await expect.poll(async () => Number(await said())).toBeGreaterThan(saidAtFirst);
+      const [paused, saidThen] = [await shown(), await said()];
       await page().waitForTimeout(300);
-      expect(await now()).toBe(paused);
+      expect([await shown(), await said()]).toEqual([paused, saidThen]);
     });
 
     it('undoes every edit by name, back to the sample, and redoes them', async () => {
