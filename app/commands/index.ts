@@ -1,6 +1,7 @@
 /** Doors of the commands: pure edits of a plan, a file for each part of the document. */
 export { applyCommand, called, together, type Command, type Entered } from './command';
 export { parsePlace, typedAt } from './typed';
+export { indexOfId } from './edit';
 export { setNotes, setTitle } from './document';
 export {
   addLayer,

@@ -23,19 +23,15 @@ export function keepProbePlaces(before: Project, after: Project): Project {
   const { layers } = after.part;
   const known = new Set(layers.map((layer) => layer.id));
   const last = layers[layers.length - 1].id;
-  const total = partThickness(after.part);
   const gone = (place: Place): boolean =>
-    ('depth' in place && place.depth > total) ||
     ('interface' in place && (!known.has(place.interface) || place.interface === last)) ||
     ('fraction' in place && place.layer !== undefined && !known.has(place.layer));
+  const total = partThickness(after.part);
   const probes = after.probes.map((probe) =>
-    gone(probe.at) ? { ...probe, at: { depth: tidied(Math.min(depthOf(probe.at, before.part.layers), total)) } } : probe,
+    gone(probe.at) ? { ...probe, at: { depth: Math.min(depthOf(probe.at, before.part.layers), total) } } : probe,
   );
   return probes.every((probe, index) => probe === after.probes[index]) ? after : { ...after, probes };
 }
-
-/** A sum of thicknesses without the noise of its addition. */
-const tidied = (depth: number): number => Number(depth.toPrecision(12));
 
 export const nextProbe = (project: Project, at: Place = { fraction: 0.5 }): Probe => ({
   id: newId('probe'),

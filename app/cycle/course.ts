@@ -1,8 +1,7 @@
 /** A ramp said in words, and where each of its segments starts. */
 import { rampDuration, segmentDuration, type LaidCycle, type Ramp, type Segment } from '../../solver/model';
-import { formatQuantity, type QuantityKind, type UnitSystem } from '../../solver/model/quantities';
+import { formatDuration, formatQuantity, type QuantityKind, type UnitSystem } from '../../solver/model/quantities';
 import type { ScheduleKey, ScheduleOf, SegmentKind } from '../commands';
-import { roundTime } from '../ui';
 
 /** Kind of the values of a schedule. */
 export const kindOfSchedule = (of: ScheduleOf): QuantityKind => {
@@ -60,7 +59,7 @@ export function segmentOfKind(kind: SegmentKind, { segment, from, duration }: Se
   }
 }
 
-/** "to 180 °C at 20 K/h", "to 180 °C in 3 h", "3 segments to 550 °C, 12 h", "holds". */
+/** "to 180 °C at 20 K/h", "to 180 °C in 3 h 00 min", "3 segments, to 550 °C, 12 h 00 min", "holds". */
 export function courseInWords(ramp: Ramp, entry: number, system: UnitSystem): string {
   const { segments } = ramp;
   if (segments.length === 0) return ramp.start === undefined ? 'holds' : `from ${value(ramp.start, system)}`;
@@ -68,14 +67,14 @@ export function courseInWords(ramp: Ramp, entry: number, system: UnitSystem): st
   const last = segments.filter((segment) => 'to' in segment).at(-1);
   const target = last === undefined ? '' : ` to ${value(last.to, system)}`;
   const length = rampDuration(ramp, entry);
-  return `${segments.length} segments${target}${Number.isFinite(length) ? `, ${roundTime(length)}` : ''}`;
+  return `${segments.length} segments${target}${Number.isFinite(length) ? `, ${formatDuration(length)}` : ''}`;
 }
 
 const value = (celsius: number, system: UnitSystem): string => formatQuantity(celsius, 'temperature', system).text;
 
 function segmentInWords(segment: Segment, system: UnitSystem): string {
-  if ('hold' in segment) return `holds for ${roundTime(segment.hold)}`;
+  if ('hold' in segment) return `holds for ${formatDuration(segment.hold)}`;
   const to = `to ${value(segment.to, system)}`;
   if ('rate' in segment) return `${to} at ${formatQuantity(segment.rate, 'temperatureRate', system).text}`;
-  return segment.duration === 0 ? `jumps ${to}` : `${to} in ${roundTime(segment.duration)}`;
+  return segment.duration === 0 ? `jumps ${to}` : `${to} in ${formatDuration(segment.duration)}`;
 }

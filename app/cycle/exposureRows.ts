@@ -19,14 +19,14 @@ import {
   type Stage,
   type TemperatureSchedule,
 } from '../../solver/model';
-import type { QuantityKind, UnitSystem } from '../../solver/model/quantities';
+import type { QuantityKind } from '../../solver/model/quantities';
 
-export const exposureColumns = (system: UnitSystem): readonly Column[] => [
+export const EXPOSURE_COLUMNS: readonly Column[] = [
   { head: '' },
-  { head: 'Meets', width: '22%' },
-  { head: 'Film coefficient', width: system === 'SI' ? '104px' : '138px', align: 'right' },
-  { head: 'Outside', width: '18%' },
-  { head: 'Value', width: system === 'SI' ? '92px' : '116px', align: 'right' },
+  { head: 'Meets', width: '20%' },
+  { head: 'Film coefficient', width: '19%', align: 'right' },
+  { head: 'Outside', width: '19%' },
+  { head: 'Value', width: '15%', align: 'right' },
 ];
 
 const KINDS: readonly ExposureKind[] = ['film', 'temperature', 'flux', 'insulated'];

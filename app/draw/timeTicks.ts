@@ -48,11 +48,11 @@ const MINOR_GAP = 12;
 export function timeTicks(from: number, to: number, width: number): TimeTicks {
   if (!(to > from) || !(width > 0)) return { major: [], minor: [], unit: 's' };
   const perPixel = (to - from) / width;
-  let step = timeStep(perPixel * PLAIN_GAP);
+  let step = stepOf(perPixel * PLAIN_GAP);
   let unit = unitOf(step);
   const plain = to <= PLAIN_UNTIL[unit];
   if (!plain) {
-    step = timeStep(perPixel * SPELT_GAP);
+    step = stepOf(perPixel * SPELT_GAP);
     unit = unitOf(step);
   }
   const spelt = to > PLAIN_UNTIL[unit];
@@ -62,8 +62,7 @@ export function timeTicks(from: number, to: number, width: number): TimeTicks {
   return { major, minor, unit: spelt ? null : unit };
 }
 
-/** The smallest round step of time that is at least `size`, s. */
-export function timeStep(size: number): number {
+function stepOf(size: number): number {
   if (size < 1) return roundStep(size);
   return STEPS.find((step) => step >= size) ?? roundStep(size / STEPS[STEPS.length - 1]) * STEPS[STEPS.length - 1];
 }

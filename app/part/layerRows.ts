@@ -26,7 +26,7 @@ export const layerColumns = (system: UnitSystem): readonly Column[] => [
   { head: '', width: '23%' },
   { head: 'Material' },
   { head: 'Thickness', width: '76px', align: 'right' },
-  { head: 'Contact to next', width: system === 'SI' ? '112px' : '154px', align: 'right' },
+  { head: 'Contact to next', width: system === 'SI' ? '112px' : '138px', align: 'right' },
   { head: 'Start', width: '62px', align: 'right' },
 ];
 

@@ -13,13 +13,12 @@ import {
 } from '../commands';
 import { tintOf, type Cell, type Column, type QuantitySpec, type Row } from '../ui';
 import type { Material, Project } from '../../solver/model';
-import type { UnitSystem } from '../../solver/model/quantities';
 
-export const materialColumns = (system: UnitSystem): readonly Column[] => [
+export const MATERIAL_COLUMNS: readonly Column[] = [
   { head: '' },
-  { head: 'Conductivity', width: system === 'SI' ? '92px' : '132px', align: 'right' },
-  { head: 'Density', width: '90px', align: 'right' },
-  { head: 'Heat capacity', width: system === 'SI' ? '94px' : '116px', align: 'right' },
+  { head: 'Conductivity', width: '19%', align: 'right' },
+  { head: 'Density', width: '16%', align: 'right' },
+  { head: 'Heat capacity', width: '19%', align: 'right' },
   { head: 'Source', width: '19%' },
 ];
 

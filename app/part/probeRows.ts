@@ -17,18 +17,18 @@ import type { UnitSystem } from '../../solver/model/quantities';
 
 export const PROBE_COLUMNS: readonly Column[] = [
   { head: '' },
-  { head: 'Placed by', width: '19%' },
-  { head: 'Where', width: '36%' },
-  { head: 'Place', width: '14%', align: 'right' },
+  { head: 'Placed by', width: '23%' },
+  { head: 'Where', width: '28%' },
+  { head: 'Place', width: '17%', align: 'right' },
 ];
 
 type PlaceKind = 'depth' | 'part' | 'layer' | 'face' | 'interface';
 const PLACE_KINDS: readonly { value: PlaceKind; label: string }[] = [
   { value: 'face', label: 'face' },
   { value: 'depth', label: 'depth' },
-  { value: 'part', label: 'part' },
-  { value: 'layer', label: 'layer' },
-  { value: 'interface', label: 'interface' },
+  { value: 'part', label: 'part of the way' },
+  { value: 'layer', label: 'part of a layer' },
+  { value: 'interface', label: 'side of an interface' },
 ];
 
 export function placeKind(at: Place): PlaceKind {
@@ -119,8 +119,8 @@ function whereCell(project: Project, probe: Probe, index: number, place: (at: Pl
     const options = layers.slice(0, -1).flatMap((layer, i) => {
       const [before, after] = [orKind(layer.name, `layer ${i + 1}`), orKind(layers[i + 1].name, `layer ${i + 2}`)];
       return [
-        { value: `before ${layer.id}`, label: `in ${before}, at ${after}` },
-        { value: `after ${layer.id}`, label: `in ${after}, at ${before}` },
+        { value: `before ${layer.id}`, label: `${before} | ${after}: in ${before}` },
+        { value: `after ${layer.id}`, label: `${before} | ${after}: in ${after}` },
       ];
     });
     return {
@@ -144,7 +144,7 @@ function whereCell(project: Project, probe: Probe, index: number, place: (at: Pl
       edit: (layer) => place({ layer, fraction: at.fraction }),
     };
   }
-  return { kind: 'shown', text: `from ${orKind(faces.start.name, 'the start face')}`, muted: true };
+  return { kind: 'shown', text: 'from the start face', muted: true };
 }
 
 function numberCell(project: Project, probe: Probe, index: number, system: UnitSystem): Cell {

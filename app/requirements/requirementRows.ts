@@ -9,32 +9,16 @@ import {
   startRequirement,
   typedAt,
 } from '../commands';
-import {
-  limitKind,
-  limitSign,
-  requirementInWords,
-  VERDICT_WORDS,
-  whereInWords,
-  type Column,
-  type Row,
-  type VerdictView,
-} from '../ui';
+import { limitKind, limitSign, requirementInWords, whereInWords, type Column, type Row, type VerdictView } from '../ui';
 import type { Project, Requirement } from '../../solver/model';
 import type { UnitSystem } from '../../solver/model/quantities';
 
 export const REQUIREMENT_COLUMNS: readonly Column[] = [
   { head: '' },
   { head: 'Limit', width: '13.5%', align: 'right' },
-  { head: 'Counts', width: '33.5%' },
-  { head: 'Verdict', width: '19%' },
+  { head: 'Counts', width: '37%' },
+  { head: 'Verdict', width: '15%' },
 ];
-
-/** Verdicts that are too long for their column. */
-const SHORT_WORDS: Record<string, string> = {
-  [VERDICT_WORDS.thin]: 'Thin',
-  [VERDICT_WORDS['never-reached']]: 'Not reached',
-  [VERDICT_WORDS['cannot-be-judged']]: 'Not judged',
-};
 
 export interface RequirementContext {
   system: UnitSystem;
@@ -81,7 +65,7 @@ function requirementCells(project: Project, requirement: Requirement, index: num
     { kind: 'shown', text: whereInWords(requirement, project), path: [...path, 'counts'] },
     {
       kind: 'shown',
-      text: SHORT_WORDS[verdict.word] ?? verdict.word,
+      text: verdict.word,
       sign: verdict.sign,
       muted: verdict.old || verdict.sign === 'wait',
       act: () => context.goTo(requirement.id),

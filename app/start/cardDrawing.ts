@@ -26,7 +26,10 @@ export function drawCard(project: Project): CardDrawing {
     LEAST_LAYER,
   );
   const laid = layCycle(project);
-  const courses = coursesOf(laid);
+  const outside = FACES.map((face) => outsideOf(laid, face)).filter((line) =>
+    line.value.some((value) => value !== line.value[0]),
+  );
+  const courses = outside.length > 0 ? outside : [laid.setPoint];
   const limits = project.requirements.filter(({ of }) => !('difference' in of)).map(({ must }) => must.limit);
   const [low, high] = extent([...courses.map(({ value }) => value), limits]) ?? [0, 1];
   const time = linearScale(0, laid.end, COURSE.left, COURSE.right);
@@ -46,13 +49,6 @@ export function drawCard(project: Project): CardDrawing {
     limits: limits.map((limit) => value.at(limit)),
     duration_s: laid.end,
   };
-}
-
-/** What the faces meet, where it changes, each course once; the set-point where nothing does. */
-function coursesOf(laid: LaidCycle): Line[] {
-  const outside = FACES.map((face) => outsideOf(laid, face)).filter(({ value }) => value.some((item) => item !== value[0]));
-  const same = outside.length === 2 && JSON.stringify(outside[0]) === JSON.stringify(outside[1]);
-  return outside.length === 0 ? [laid.setPoint] : same ? [outside[0]] : outside;
 }
 
 /** The temperature outside a face over the whole cycle, °C; a stage that gives none leaves a gap. */

@@ -34,11 +34,21 @@ interface Complete {
   project: Project;
 }
 
+/** What the job in hand has said. */
+interface Gathered {
+  result: Answered | null;
+  frames: Frames | null;
+  /** The run is over: its values stand, their uncertainty is still to come. */
+  refining: boolean;
+}
+
 export const useRunStore = defineStore('run', () => {
   const project = useProjectStore();
   const complete = shallowRef<Complete | null>(null);
   const state = shallowRef<RunState>('idle');
   const progress = shallowRef<Progress | null>(null);
+  /** How far the answers on screen are on the way to their uncertainty, 0 to 1; null when they are not on it. */
+  const refining = shallowRef<number | null>(null);
   const solveMs = shallowRef<number | null>(null);
   /** What to tell the person about the last run: why it failed or stopped, or that the solver was started again. */
   const message = shallowRef<string | null>(null);
@@ -60,13 +70,10 @@ export const useRunStore = defineStore('run', () => {
   let waitingTimer: ReturnType<typeof setTimeout> | undefined;
   watch(
     state,
-    (now, before) => {
-      if (now === 'live') {
-        clearTimeout(waitingTimer);
-        waiting.value = false;
-      } else if (before === 'live' || before === undefined) {
-        waitingTimer = setTimeout(() => (waiting.value = true), SHOW_WAITING_MS);
-      }
+    (now) => {
+      clearTimeout(waitingTimer);
+      if (now === 'live') waiting.value = false;
+      else if (!waiting.value) waitingTimer = setTimeout(() => (waiting.value = true), SHOW_WAITING_MS);
     },
     { flush: 'sync', immediate: true },
   );
@@ -74,7 +81,7 @@ export const useRunStore = defineStore('run', () => {
   let client: SolverClient | null = null;
   /** The newest job; whatever an older one still says is dropped. */
   let asked: { project: Project; job: number; at: number } | null = null;
-  let gathered: { result: Answered | null; frames: Frames | null } = { result: null, frames: null };
+  let gathered: Gathered = { result: null, frames: null, refining: false };
   let timer: ReturnType<typeof setTimeout> | undefined;
   let waitingSince: number | null = null;
   /** The document whose answers are on screen: answers of another document are never kept. */
@@ -85,6 +92,7 @@ export const useRunStore = defineStore('run', () => {
     clearTimeout(timer);
     message.value = null;
     progress.value = null;
+    refining.value = null;
     if (solved.value === project.current && outcome.value?.reason === 'finished') {
       stopAsking();
       state.value = 'live';
@@ -115,7 +123,7 @@ export const useRunStore = defineStore('run', () => {
     waitingSince = null;
     if (client === null || project.problems.length > 0) return;
     const plan = project.current;
-    gathered = { result: null, frames: null };
+    gathered = { result: null, frames: null, refining: false };
     asked = { project: plan, job: -1, at: performance.now() };
     state.value = 'solving';
     message.value = null;
@@ -131,24 +139,44 @@ export const useRunStore = defineStore('run', () => {
     if (asked === null || event.job !== asked.job) return;
     switch (event.type) {
       case 'progress':
-        progress.value = progressOf(event, performance.now() - asked.at);
+        if (event.state === 'refining') refining.value = refining.value === null ? null : event.fraction;
+        else progress.value = progressOf(event, performance.now() - asked.at);
         return;
       case 'answers':
         gathered.result = event.result;
+        gathered.refining = event.refining === true;
+        if (gathered.refining) return;
         if (complete.value === null && !event.final)
           complete.value = { ...gathered, result: event.result, project: asked.project };
         return;
       case 'frames':
         gathered.frames = event.frames;
+        if (gathered.refining) showValues();
         return;
       case 'done':
         return ended(event.outcomes[0]);
       case 'failed':
+        message.value = event.message;
+        // What is on screen stands; only its uncertainty did not come.
+        if (refining.value === null) state.value = event.code === 'cancelled' ? 'cancelled' : 'failed';
         asked = null;
         progress.value = null;
-        state.value = event.code === 'cancelled' ? 'cancelled' : 'failed';
-        message.value = event.message;
+        refining.value = null;
     }
+  }
+
+  /** The run is over and its values are complete: they are shown while their uncertainty is sought. */
+  function showValues(): void {
+    const { project: plan, at } = asked as { project: Project; at: number };
+    if (gathered.result === null) return;
+    complete.value = { result: gathered.result, frames: gathered.frames, project: plan };
+    outcome.value = gathered.result.outcome;
+    stability.value = gathered.result.stability;
+    solveMs.value = performance.now() - at;
+    progress.value = null;
+    if (plan !== project.current) return;
+    refining.value = 0;
+    state.value = 'live';
   }
 
   /** Takes over what the run came to: all of it, or as far as it went; a refused run leaves the earlier answers. */
@@ -157,14 +185,15 @@ export const useRunStore = defineStore('run', () => {
     asked = null;
     progress.value = null;
     outcome.value = how;
-    solveMs.value = performance.now() - at;
+    if (refining.value === null) solveMs.value = performance.now() - at;
+    refining.value = null;
     if (gathered.result !== null) {
       stability.value = gathered.result.stability;
       if (how.reason === 'finished' || how.reached_s > 0 || complete.value === null) {
         complete.value = { result: gathered.result, frames: gathered.frames, project: plan };
       }
     }
-    gathered = { result: null, frames: null };
+    gathered = { result: null, frames: null, refining: false };
     // The plan went on while this ran, as it does under a drag: nearer than what was there, but stale.
     if (plan !== project.current) return;
     message.value = how.message;
@@ -182,6 +211,7 @@ export const useRunStore = defineStore('run', () => {
     waiting,
     state,
     progress,
+    refining,
     solveMs,
     message,
     outcome,

@@ -11,11 +11,11 @@ export { default as SheetSection } from './SheetSection.vue';
 export { default as Sign } from './Sign.vue';
 export { default as TextField } from './TextField.vue';
 export { type Cell, type Column, type Row } from './grid/cells';
-export { problemInUnits } from './problemInUnits';
 export { type QuantitySpec } from './readEntered';
 export { tintNumber, tintOf } from './tint';
 export {
   countOf,
+  countsInWords,
   depthInWords,
   differenceInWords,
   layerName,
@@ -26,7 +26,6 @@ export {
   placeInWords,
   requirementInWords,
   requirementParts,
-  roundTime,
   stageName,
   subjectInWords,
   temperatureInWords,
@@ -43,4 +42,3 @@ export { default as ChartTwin } from './ChartTwin.vue';
 export { default as DragHandle } from './DragHandle.vue';
 export { useHold, type Hold } from './useHold';
 export { useSize } from './useSize';
-export { moveTo, showIf, writeAttribute, writeText } from './live';

@@ -8,41 +8,28 @@
 import { saveBlob } from './saveFile';
 
 const SCALE = 2;
-/** Under the last row, for what stands out of it a little, px. */
-const MARGIN = 4;
 
-/** Rows of a picture, one under the other; the elements of a row keep their places beside its first. */
-export type PictureRows = readonly (readonly HTMLElement[])[];
-
-/** Saves rows of elements as a PNG file. */
-export async function savePicture(rows: PictureRows, name: string): Promise<void> {
-  const sizes = rows.map(([first]) => first.getBoundingClientRect());
-  const width = Math.max(...sizes.map((size) => size.width));
-  const height = sizes.reduce((sum, size) => sum + size.height, 0) + MARGIN;
+/** Saves an element as a PNG file. */
+export async function savePicture(element: HTMLElement, name: string): Promise<void> {
+  const { width, height } = element.getBoundingClientRect();
   const canvas = document.createElement('canvas');
   canvas.width = Math.ceil(width * SCALE);
   canvas.height = Math.ceil(height * SCALE);
   const context = canvas.getContext('2d');
   if (context === null) return;
-  paintPicture(rows, context);
+  paintPicture(element, context);
   const blob = await new Promise<Blob | null>((resolve) => canvas.toBlob(resolve, 'image/png'));
   if (blob !== null) saveBlob(blob, name);
 }
 
-/** Paints the rows from the corner of the canvas down, on the colour of panels. */
-export function paintPicture(rows: PictureRows, context: CanvasRenderingContext2D): void {
-  const { canvas } = context;
-  context.fillStyle = getComputedStyle(rows[0][0]).getPropertyValue('--panel') || '#fff';
-  context.fillRect(0, 0, canvas.width, canvas.height);
+/** Paints an element with everything in it, its corner at the origin. */
+export function paintPicture(element: HTMLElement, context: CanvasRenderingContext2D): void {
+  const corner = element.getBoundingClientRect();
   context.scale(SCALE, SCALE);
-  for (const row of rows) {
-    const corner = row[0].getBoundingClientRect();
-    context.save();
-    context.translate(-corner.left, -corner.top);
-    for (const element of row) paint(element, context, 1);
-    context.restore();
-    context.translate(0, corner.height);
-  }
+  context.fillStyle = getComputedStyle(element).getPropertyValue('--panel') || '#fff';
+  context.fillRect(0, 0, corner.width, corner.height);
+  context.translate(-corner.left, -corner.top);
+  paint(element, context, 1);
 }
 
 function paint(element: Element, context: CanvasRenderingContext2D, alphaAbove: number): void {

@@ -1,6 +1,6 @@
 /** What a field makes of the text in it: a number to enter, or what to say about it. */
 import type { Entered } from '../commands';
-import { formatQuantity, readQuantity, type QuantityKind, type UnitSystem, type Written } from '../../solver/model/quantities';
+import { formatQuantity, readQuantity, type QuantityKind, type UnitSystem } from '../../solver/model/quantities';
 
 /** Bounds in the stored unit; `above` and `below` exclude the bound itself. */
 export interface Bounds {
@@ -50,23 +50,15 @@ export function readEntered(text: string, spec: QuantitySpec, system: UnitSystem
   }
 }
 
-/** The number as a field shows it. */
-export function shownNumber(value: number | null, spec: QuantitySpec, system: UnitSystem): Written {
+/** The number as a field or a cell shows it. */
+export function shownNumber(
+  value: number | null,
+  spec: QuantitySpec,
+  system: UnitSystem,
+): { number: string; unit: string; text: string } {
   if (value === null) return { number: '', unit: '', text: '' };
   if (value === 0 && spec.zero !== undefined) return { number: spec.zero, unit: '', text: spec.zero };
   return formatQuantity(value, spec.quantity, system);
-}
-
-/** More digits than this come from a conversion of units, and are rounded where room is short. */
-const LONG = 5;
-const ROUNDED = 4;
-
-/** The number as a cell shows it: in full where it is short, else to four digits; editing it brings all of them back. */
-export function shownInCell(value: number | null, spec: QuantitySpec, system: UnitSystem): Written {
-  const full = shownNumber(value, spec, system);
-  const digits = full.number.replace(/·10.*/, '').replace(/\D/g, '').replace(/^0+/, '').length;
-  if (value === null || spec.quantity === 'time' || digits <= LONG) return full;
-  return formatQuantity(value, spec.quantity, system, { significant: ROUNDED });
 }
 
 /** "Thickness must be more than 0 mm, got −5 mm."; null when the value is within its bounds. */

@@ -38,7 +38,7 @@ export function countsInWords(counts: Counts, project: Project): string {
       return `in ${stageName(project, counts.stage)}`;
     case 'within': {
       const from = counts.from === undefined ? '' : ` of the start of ${stageName(project, counts.from)}`;
-      return `within ${roundTime(counts.time)}${from}`;
+      return `within ${formatDuration(counts.time)}${from}`;
     }
     case 'stageEnd':
       return `at the end of ${stageName(project, counts.stage)}`;
@@ -49,7 +49,7 @@ export function countsInWords(counts: Counts, project: Project): string {
 export function whereInWords(requirement: Requirement, project: Project): string {
   const { must, counts } = requirement;
   const where = countsInWords(counts, project);
-  if (must.kind === 'heldFor') return `for ${roundTime(must.duration)}, ${where}`;
+  if (must.kind === 'heldFor') return `for ${formatDuration(must.duration)}, ${where}`;
   return must.kind === 'reaches' ? `once, ${where}` : `always, ${where}`;
 }
 
@@ -67,7 +67,7 @@ export function requirementParts(requirement: Requirement, project: Project, sys
   const limit = `${limitSign(requirement)} ${formatQuantity(must.limit, limitKind(of), system).text}`;
   return {
     subject: subjectInWords(of, project),
-    limit: must.kind === 'heldFor' ? `${limit} for ${roundTime(must.duration)}` : limit,
+    limit: must.kind === 'heldFor' ? `${limit} for ${formatDuration(must.duration)}` : limit,
     where: counts.kind === 'cycle' ? '' : countsInWords(counts, project),
   };
 }
@@ -77,9 +77,6 @@ export function requirementInWords(requirement: Requirement, project: Project, s
   const { subject, limit, where } = requirementParts(requirement, project, system);
   return `${subject} ${limit}${where === '' ? '' : ` ${where}`}`;
 }
-
-/** A time that was set, without its empty minutes: "6 h". */
-export const roundTime = (seconds: number): string => formatDuration(seconds).replace(/ 00 (?:min|s|h)$/, '');
 
 /** "120 mm deep", "middle of Shell", "Hot face", "Lining side of Lining / Shell". */
 export function placeInWords(at: Place, project: Project, system: UnitSystem): string {

@@ -20,10 +20,10 @@ const BUILT = [inRoot('out/app/index.html'), inRoot('out/desktop/main/main.js')]
 
 function build(): boolean {
   say('Building Soakwright …');
-  const builder = inRoot('node_modules/electron-vite/bin/electron-vite.js');
-  const { status } = spawnSync(process.execPath, [builder, 'build', '-c', 'electron.config.ts'], {
+  const { status } = spawnSync('npm', ['run', '--silent', 'build'], {
     cwd: root,
     stdio: ['ignore', 'ignore', 'inherit'],
+    shell: true,
   });
   return status === 0;
 }

@@ -18,8 +18,6 @@ export function menuTemplate(platform: NodeJS.Platform, actions: MenuActions): I
   const command = (label: string, name: string, accelerator?: string): Item => ({
     label,
     accelerator,
-    // Shown only: the page hears its keys itself, and leaves some of them to a field that is being typed in.
-    registerAccelerator: false,
     click: () => actions.command(name),
   });
   const separator: Item = { type: 'separator' };

@@ -2,8 +2,7 @@
  * The temperature at any depth from the temperatures at the points of its layer.
  *
  * Lagrange polynomial through the six nearest points of one layer (fewer where the layer has fewer): a profile is smooth
- * inside a layer and has a kink, or a jump, at its edges. Six, because with four the reading was less exact than the field; five
- * between the last two points of a layer, where six would lie to one side and swing beyond a steep front.
+ * inside a layer and has a kink, or a jump, at its edges. Six, because with four the reading was less exact than the field.
  */
 import type { FieldPoints } from './points';
 
@@ -14,7 +13,6 @@ export interface Stencil {
 }
 
 const WIDTH = 6;
-const WIDTH_AT_EDGE = 5;
 /** A depth this close to a point, as a part of the layer's thickness, is that point. */
 const SAME_PLACE = 1e-9;
 
@@ -31,9 +29,8 @@ export function stencilAt(points: FieldPoints, depth: number, layer = layerAt(po
   if (Math.abs(position[near] - place) <= SAME_PLACE * (position[last] - position[first])) {
     return { points: Int32Array.of(near), weights: Float64Array.of(1) };
   }
+  const width = Math.min(WIDTH, last - first + 1);
   const left = position[near] > place ? near - 1 : near;
-  const inside = Math.min(left - first, last - left - 1);
-  const width = Math.min(inside === 0 ? WIDTH_AT_EDGE : WIDTH, last - first + 1);
   const start = Math.max(first, Math.min(left - (width >> 1) + 1, last - width + 1));
   const chosen = Int32Array.from({ length: width }, (_, i) => start + i);
   return { points: chosen, weights: lagrangeWeights(position, chosen, place) };

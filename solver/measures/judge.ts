@@ -84,13 +84,15 @@ export function judge(requirement: Requirement, tally: Tally, cycle: LaidCycle, 
     unit: inSeconds ? 's' : 'difference' in requirement.of ? 'K' : '°C',
     margin_unit: marginUnit(requirement),
     uncertainty: null,
+    value_uncertainty: null,
+    time_uncertainty_s: null,
     position_m: 'point' in requirement.of ? judgement.position : null,
     spans: spansOf(requirement, tally, reached),
   };
 }
 
 /** Unit of a requirement's margin: s for "within" and "held for", K for all other limits. */
-const marginUnit = ({ must, counts }: Pick<Requirement, 'must' | 'counts'>): 'K' | 's' =>
+export const marginUnit = ({ must, counts }: Pick<Requirement, 'must' | 'counts'>): 'K' | 's' =>
   must.kind === 'heldFor' || (must.kind === 'reaches' && counts.kind === 'within') ? 's' : 'K';
 
 function judgementOf({ must, counts }: Requirement, tally: Tally, over: (time: number) => boolean): Judgement {

@@ -2,20 +2,8 @@
 import type { Requirement, Span } from '../model';
 import type { Tally } from './tally';
 
-/** More pieces than a bar can show; of more, those too short to be seen are left out. */
-const MANY = 400;
-const TOO_SHORT = 1 / 2000;
-
 /** Spans of a requirement watched up to `reached`, s: first the window it counts in, then what happened. */
-export function spansOf(requirement: Requirement, tally: Tally, reached: number): Span[] {
-  const spans = allSpans(requirement, tally, reached);
-  if (spans.length <= MANY) return spans;
-  const [counting, ...rest] = spans;
-  const shortest = TOO_SHORT * (tally.window.look.to - tally.window.look.from);
-  return [counting, ...rest.filter(({ from_s, to_s }) => to_s - from_s > shortest)];
-}
-
-function allSpans({ must, counts }: Requirement, tally: Tally, reached: number): Span[] {
+export function spansOf({ must, counts }: Requirement, tally: Tally, reached: number): Span[] {
   const { window, holds } = tally;
   const spans: Span[] = [span(window.counts.from, window.counts.to, 'counting')];
   const add = (from: number, to: number, kind: Span['kind']): void => {

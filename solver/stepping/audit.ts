@@ -7,7 +7,7 @@ const sumOf = (values: Float64Array): number => values.reduce((sum, value) => su
 export class Audit {
   private readonly system: HeatSystem;
   private readonly state: HeatState;
-  private readonly storedAtStart: Float64Array;
+  private readonly storedAtStart: number;
   private readonly counted: Float64Array;
   private exchanged = 0;
   private largestLag = 0;
@@ -15,7 +15,7 @@ export class Audit {
   constructor(system: HeatSystem, state: HeatState) {
     this.system = system;
     this.state = state;
-    this.storedAtStart = Float64Array.from(state.stored);
+    this.storedAtStart = this.storedNow();
     this.counted = new Float64Array(system.heats);
   }
 
@@ -32,12 +32,16 @@ export class Audit {
     if (!this.system.linear) this.largestLag = this.lagUpTo(time);
   }
 
+  private storedNow(): number {
+    return sumOf(this.state.stored.subarray(0, this.system.heatRows));
+  }
+
   /** The largest lag noted so far or found at `time`. Looking changes nothing: how often a run was asked leaves no trace in it. */
   private lagUpTo(time: number): number {
     const { system, state } = this;
     let largest = this.largestLag;
     system.evaluate(state.unknowns, time);
-    for (let row = 0; row < system.size; row++) {
+    for (let row = 0; row < system.heatRows; row++) {
       const lag = Math.abs((state.stored[row] - system.storage[row]) / system.rowCapacity[row]);
       if (lag > largest) largest = lag;
     }
@@ -46,15 +50,12 @@ export class Audit {
 
   /**
    * `stored` and `through` in J per basis since the start. Closure: |ΔE − ΣQ| / Σ|Q|, the last sum over all tracked heats and
-   * steps, so that a cycle that gives back what it took has one too; 0 if nothing was exchanged. A millionth of the heat that
-   * moved inside is added to it: of less exchange than that, ΔE is rounding. `lag` in K, the largest so far.
+   * steps, so that a cycle that gives back what it took has one too; 0 if nothing was exchanged. `lag` in K, the largest so far.
    */
   figures(time: number): { stored: number; through: Float64Array; closure: number; lag: number } {
-    const { state, exchanged, storedAtStart } = this;
-    const changes = state.stored.map((value, row) => value - storedAtStart[row]);
-    const stored = sumOf(changes);
-    const moved = sumOf(changes.map(Math.abs));
-    const closure = exchanged > 0 ? Math.abs(stored - sumOf(state.through)) / (exchanged + 1e-6 * moved) : 0;
+    const { state, exchanged } = this;
+    const stored = this.storedNow() - this.storedAtStart;
+    const closure = exchanged > 0 ? Math.abs(stored - sumOf(state.through)) / exchanged : 0;
     return { stored, through: Float64Array.from(state.through), closure, lag: this.lagUpTo(time) };
   }
 }

@@ -28,13 +28,7 @@ const STAGES = POINTS.length;
 const LAST = STAGES - 1;
 const EMBEDDED_ORDER = 4;
 /** Error of one step allowed, in parts of the wanted accuracy: steps add up, and the grid has its share. */
-const LOCAL_PART = 0.3;
-/**
- * The stock method takes the last stage alone as the error. Where dF/du changes within a step (a film coefficient on a steep ramp)
- * that stage can vanish by luck while the one before is large: an error of five accuracies went through. This part of the
- * stage before counts as well; where dF/du is constant it did not decide in any problem measured.
- */
-const STAGE_BEFORE_PART = 0.2;
+const LOCAL_PART = 0.2;
 /** After a jump, the row that it hits hardest may move by this many local errors in the first step. */
 const FIRST_STEP_ERRORS = 50;
 /** The first step is never below this part of the cycle, nor any other below the second: time must still move. */
@@ -62,8 +56,6 @@ export class Automatic implements Scheme {
   private readonly throughBefore: Float64Array;
   private readonly dense: Float64Array;
   private denseKnown = false;
-  /** Size of the last stage but one, K. */
-  private changeBefore = 0;
   private length = 0;
   /** F, ∂F/∂t and the rates of held unknowns at the end of the last interval, under its exposures. */
   private readonly inflowBefore: Float64Array;
@@ -156,10 +148,9 @@ export class Automatic implements Scheme {
         system.evaluate(this.point, stageTime);
       }
       this.solveStage(i, stageTime, length);
-      if (i === LAST - 1) this.changeBefore = system.largestChange(this.stage).kelvin;
     }
-    const { kelvin, row } = system.largestChange(this.stage);
-    const error = Math.max(kelvin, STAGE_BEFORE_PART * this.changeBefore) / this.localError;
+    const { kelvin, row } = system.largestChange(this.point, this.stage);
+    const error = kelvin / this.localError;
     if (error <= 1) {
       this.controller.accept(length, error);
       this.accept(time + length, length);
@@ -215,6 +206,7 @@ export class Automatic implements Scheme {
       state.through[heat] += throughStages.sum(heat, POINTS[LAST]) + throughStages.get(heat, LAST);
     }
     this.system.hold(state.unknowns, end, state.stored, state.through);
+    this.system.settle(state.unknowns);
     this.length = length;
     this.linearised = false;
   }

@@ -25,7 +25,7 @@ export interface Step {
   /**
    * Temperatures at all points at `fraction` (0 to 1) of the step, by the scheme's own dense output, °C: a polynomial of at
    * most the fourth degree in the fraction at every point, so that five values of a step tell all of it. (Nearly so at the
-   * face of a grid of cells while its film coefficient changes.)
+   * face of a grid of cells while its film coefficient changes, and where a point takes up latent heat.)
    */
   at(fraction: number, out: Float64Array): void;
   /** sum of weights[i] × temperature of points[i], at `fraction` of the step, °C. */

@@ -9,7 +9,7 @@
  *    rounding of it, to end on the edge.
  * 4. `attempt` takes one step from `time`. Accepted: the state is that of the end. Rejected: the state is untouched, and the
  *    next proposal is shorter. Failed: the step cannot be taken, with the row where it went wrong. Never an exception.
- * 5. Heat is moved, not made: `stored` changes by what `through` says came in, to rounding, at every accepted step.
+ * 5. After an accepted step, and before anyone looks, it lets the system `settle`. Heat is moved, not made: `stored` changes by what `through` says came in, to rounding, at every accepted step.
  * 6. After an accepted step `unknownAt` is the scheme's own dense output at a fraction of that step, and `heatRateAt` the rate of
  *    a tracked heat by it. Both hold until the next attempt.
  */
@@ -27,6 +27,9 @@ export interface HeatState {
 
 export function startState(system: HeatSystem): HeatState {
   const unknowns = system.initial();
+  // Twice: there is no step before the first.
+  system.settle(unknowns);
+  system.settle(unknowns);
   system.evaluate(unknowns, 0);
   return { unknowns, stored: Float64Array.from(system.storage), through: new Float64Array(system.heats) };
 }
@@ -34,7 +37,10 @@ export function startState(system: HeatSystem): HeatState {
 export type Attempt =
   | { readonly kind: 'accepted' }
   | { readonly kind: 'rejected' }
-  | { readonly kind: 'failed'; readonly reason: 'not-finite' | 'step-too-small'; readonly row: number };
+  | { readonly kind: 'failed'; readonly reason: FailedStep; readonly row: number };
+
+/** Why a step cannot be taken. */
+export type FailedStep = 'not-finite' | 'step-too-small' | 'not-converged' | 'step-above-limit';
 
 export const ACCEPTED: Attempt = { kind: 'accepted' };
 export const REJECTED: Attempt = { kind: 'rejected' };

@@ -13,12 +13,16 @@ export class StepView implements Step {
   private readonly system: HeatSystem;
   private readonly state: HeatState;
   private readonly scheme: Scheme;
+  private readonly faceArea: readonly [number, number];
   /** Unknowns and field at a fraction, where points are not plain unknowns. */
   private readonly unknowns: Float64Array;
   private readonly field: Float64Array;
   private fieldFraction = NaN;
+  private bentPoints: readonly number[] | null = null;
 
-  constructor(system: HeatSystem, state: HeatState, scheme: Scheme) {
+  /** `faceArea`: of the start and the end face, m² per basis. */
+  constructor(system: HeatSystem, state: HeatState, scheme: Scheme, faceArea: readonly [number, number]) {
+    this.faceArea = faceArea;
     this.system = system;
     this.state = state;
     this.scheme = scheme;
@@ -39,13 +43,30 @@ export class StepView implements Step {
     this.to = to;
     this.stage = stage;
     this.fieldFraction = NaN;
+    this.bentPoints = null;
     [this.before, this.after] = [this.after, this.before];
     this.system.report(this.state.unknowns, to, this.after);
   }
 
   at(fraction: number, out: Float64Array): void {
     for (let row = 0; row < this.unknowns.length; row++) this.unknowns[row] = this.scheme.unknownAt(row, fraction);
-    this.system.report(this.unknowns, this.timeAt(fraction), out);
+    this.system.report(this.unknowns, this.timeAt(fraction), out, fraction);
+    for (const point of this.bent()) {
+      const [a, b] = [this.before[point], this.after[point]];
+      out[point] = Math.min(Math.max(out[point], Math.min(a, b)), Math.max(a, b));
+    }
+  }
+
+  /**
+   * Points whose temperature bends in this step: between a phase and a plateau the polynomial of the unknown overshoots, and is
+   * kept between the ends.
+   */
+  private bent(): readonly number[] {
+    const { system, scheme, state } = this;
+    this.bentPoints ??= system.bendingPoints
+      .filter(({ row }) => system.bends(row, scheme.unknownAt(row, 0), state.unknowns[row]))
+      .map(({ point }) => point);
+    return this.bentPoints;
   }
 
   combinationAt(points: ArrayLike<number>, weights: ArrayLike<number>, fraction: number): number {
@@ -61,7 +82,9 @@ export class StepView implements Step {
   faceFluxAt(face: FaceId, fraction: number): number {
     const heat = face === 'start' ? 0 : 1;
     const byLaw = this.system.rateAt(heat, (row) => this.scheme.unknownAt(row, fraction), this.timeAt(fraction));
-    return byLaw ?? this.scheme.heatRateAt(heat, fraction);
+    const area = this.faceArea[heat];
+    // A centre has no area, and nothing flows through it.
+    return area > 0 ? (byLaw ?? this.scheme.heatRateAt(heat, fraction)) / area : 0;
   }
 
   private timeAt(fraction: number): number {

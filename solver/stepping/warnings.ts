@@ -7,8 +7,6 @@ import { figure, seconds } from './words';
 /** The lag of temperatures behind carried heat may be this part of the accuracy. */
 const LARGEST_LAG = 0.2;
 const LARGEST_CLOSURE = 1e-9;
-/** Fewer steps than this in a piece of the cycle between kinks say little about it. */
-const FEWEST_STEPS = 2;
 
 /** Warnings of a run so far; `limit` is asked for where a step is compared with it. */
 export function warningsOf(prepared: Prepared, limit: () => ExplicitLimit | null, energy: Energy): Warning[] {
@@ -34,17 +32,6 @@ export function warningsOf(prepared: Prepared, limit: () => ExplicitLimit | null
         'settings.dampedSteps',
         `Crank–Nicolson, ${seconds(settings.step)}, without damped steps: temperatures can ring after a jump, as the step is above ` +
           `${seconds(rings)}. Take damped steps (4 is usual), or a shorter step.`,
-      );
-    }
-  }
-  if (settings.scheme !== 'automatic') {
-    const shortest = Math.min(...prepared.intervals.map(({ from, to }) => to - from));
-    if (shortest < FEWEST_STEPS * settings.step) {
-      warn(
-        'few-steps',
-        'settings.step',
-        `The shortest piece of the cycle lasts ${seconds(shortest)}, less than ${FEWEST_STEPS} steps of ${seconds(settings.step)}: what ` +
-          `happens in it is taken coarsely. Take a shorter step, or the automatic scheme.`,
       );
     }
   }

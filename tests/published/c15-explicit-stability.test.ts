@@ -7,6 +7,7 @@ import { describe, expect, it } from 'vitest';
 import { createRun, makeScheme } from '../../solver/stepping';
 import { film, systemOf, toTheEnd, wall } from '../support';
 import limits from './cases/c15-explicit-stability.json';
+import roundLimits from './cases/c15-explicit-stability-cylinder.json';
 
 // k = 15 W/(m·K), ρ = 7900 kg/m³, c = 500 J/(kg·K), L = 0.02 m; the start face is the insulated middle.
 type Row = (typeof limits.expected)[number];
@@ -66,3 +67,36 @@ describe.each(rows)('$name', (row) => {
     expect(outcome.remedy?.step_s).toBeGreaterThan(0.5 * limit);
   });
 });
+
+// k = 1.4 W/(m·K), ρ = 2200 kg/m³, c = 880 J/(kg·K), R = 0.06 m, from the centre on.
+describe.each(roundLimits.expected.map((row) => ({ ...row, name: `${row.M} ${row.scheme}s, film ${row.h_W_m2K} W/(m²·K)` })))(
+  'a solid cylinder of $name',
+  (row) => {
+    const limit = row.exact_limit_dt_s;
+    const planOfCylinder = (step: number, steps: number) =>
+      wall({
+        kind: 'cylinder',
+        layers: [{ thickness: 0.06, conductivity: 1.4, density: 2200, heatCapacity: 880 }],
+        initial: 1,
+        stages: [{ lasts: step * steps, end: film(row.h_W_m2K, 0) }],
+        settings: { scheme: 'explicit', step, grid: row.scheme === 'node' ? { nodes: row.M + 1 } : { cells: row.M } },
+      });
+
+    it('has the limit 2/λmax, rounded down by no more than 0.1 %, and the step without overshoot beside it', () => {
+      const { stability } = createRun(planOfCylinder(limit / 10, 10), () => undefined);
+      expect(stability?.explicit_limit_s).toBeLessThanOrEqual(limit * (1 + 1e-7));
+      expect(stability?.explicit_limit_s).toBeGreaterThanOrEqual(limit * (1 - 1.0001e-3));
+      expect((stability?.no_overshoot_s ?? 0) / row.positivity_limit_dt_s).toBeCloseTo(1, 6);
+    });
+
+    it('stays bounded 1 % below the limit, and is refused 2 % above it', () => {
+      let largest = 0;
+      const run = createRun(planOfCylinder(0.99 * limit, 2000), ({ after }) => {
+        largest = Math.max(largest, ...after.map(Math.abs));
+      });
+      expect(toTheEnd(run).reason).toBe('finished');
+      expect(largest).toBeLessThanOrEqual(2);
+      expect(toTheEnd(createRun(planOfCylinder(1.02 * limit, 100), () => undefined)).reason).toBe('step-above-limit');
+    });
+  },
+);

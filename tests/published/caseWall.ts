@@ -1,5 +1,5 @@
-/** Walls as the reference cases give them: layers from one depth to another, ρ c as one number. */
-import type { Project } from '../../solver/model';
+/** Parts as the reference cases give them: layers from one depth or radius to another, ρ c as one number. */
+import type { Part, Project } from '../../solver/model';
 import { wall, type LayerSpec, type StageSpec } from '../support';
 
 interface LayeredCase {
@@ -17,5 +17,6 @@ export const layersOf = ({ layers, contact_resistance_m2K_W: contacts }: Layered
     contact: contacts?.[i],
   }));
 
-export const wallOf = (layered: LayeredCase, stages: StageSpec[]): Project =>
-  wall({ layers: layersOf(layered), initial: layered.T_initial_degC, stages });
+/** Lengths of a round part count from the centre. */
+export const wallOf = (layered: LayeredCase, stages: StageSpec[], kind: Part['kind'] = 'wall'): Project =>
+  wall({ kind, innerRadius: layered.layers[0].from_m, layers: layersOf(layered), initial: layered.T_initial_degC, stages });

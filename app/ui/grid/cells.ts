@@ -8,6 +8,8 @@ import type { SignKind } from '../words';
 interface Common {
   /** Path in the document of what the cell shows, so that a problem finds it. */
   path?: Path;
+  /** Said in grey after the value. */
+  note?: string;
 }
 
 export interface TextCell extends Common {
@@ -57,9 +59,11 @@ export type Cell = TextCell | QuantityCell | ChoiceCell | ShownCell;
 /** An entry of a row's menu. */
 export interface RowAction {
   label: string;
+  keys?: string;
   /** Makes an edit, or does something else. */
   command?: () => Command;
   act?: () => void;
+  disabled?: boolean;
 }
 
 export interface Row {

@@ -1,4 +1,4 @@
-import { chmod, mkdtemp, readdir, readFile, rm, writeFile } from 'node:fs/promises';
+import { mkdtemp, readFile, rm, writeFile } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
@@ -56,17 +56,6 @@ describe('documents in hand', () => {
   });
 });
 
-/** Does something without the rights of root, to whom nothing is read-only. */
-async function asNobody<T>(act: () => Promise<T>): Promise<T> {
-  const root = process.geteuid?.() === 0;
-  if (root) process.seteuid?.(65534);
-  try {
-    return await act();
-  } finally {
-    if (root) process.seteuid?.(0);
-  }
-}
-
 describe('errors of files', () => {
   const wordFor = (code: string, doing: 'open' | 'save') => wordFileError(Object.assign(new Error(code), { code }), path, doing);
 
@@ -81,19 +70,6 @@ describe('errors of files', () => {
 
   it('never hide a code that has no words yet', () => {
     expect(wordFor('EMFILE', 'open')).toBe('plan.soak could not be opened (EMFILE).');
-  });
-
-  it('come from the file system itself for a folder that may only be read', async () => {
-    await writeFile(path, 'one');
-    await chmod(path, 0o444);
-    await chmod(folder, 0o555);
-    const documents = createDocuments();
-    await documents.open(path);
-    const error = await asNobody(() => documents.save(path, 'two').catch((reason: unknown) => reason));
-    await chmod(folder, 0o755);
-    expect(wordFileError(error, path, 'save')).toContain('you have no right to write the file or its folder');
-    expect(await readFile(path, 'utf8')).toBe('one');
-    expect(await readdir(folder)).toEqual(['plan.soak']);
   });
 
   it('come from the file system itself for a place that cannot be written', async () => {

@@ -221,16 +221,6 @@ describe('held for', () => {
   });
 });
 
-describe('the bar of a requirement', () => {
-  it('leaves out what is too short to be seen where a course swings about its limit thousands of times', () => {
-    const swinging: FieldFunction = (_, t) => (t < 150 ? 100 + Math.sin(20 * Math.PI * t) : 200);
-    const answer = answerTo(requirement(reaches(100)), swinging, { play: { steps: 4000 } });
-    expect(answer.verdict).toBe('met');
-    expect(answer.spans.length).toBeLessThan(400);
-    expect(of('fulfilled', answer).at(-1)).toEqual([expect.closeTo(150, 1), 200]);
-  });
-});
-
 describe('subjects', () => {
   it('the coldest and the hottest point tell which place decided', () => {
     const field: FieldFunction = (x, t) => t * (1 + 10 * (x - 0.03) ** 2);

@@ -17,6 +17,17 @@ const faces: [string, Exposure, number[]][] = [
   ],
   ['a flux that changes', { kind: 'flux', flux: ramp(0, 4000) }, [10, 20, 40]],
   ['a held temperature that changes', { kind: 'temperature', temperature: ramp(20, 600) }, [10, 20, 40]],
+  ['an enclosure that warms', { kind: 'radiation', emissivity: 0.8, enclosure: ramp(20, 700) }, [40, 80, 160]],
+  [
+    'gas by expression and walls of their own',
+    {
+      kind: 'film',
+      coefficient: { expression: '10 + 0.01*Ts + t/400' },
+      surroundings: { expression: '300 - 280*cos(t/900)' },
+      radiation: { emissivity: 0.6, enclosure: ramp(20, 500) },
+    },
+    [80, 160, 320],
+  ],
 ];
 
 const bodyOf = (start: Exposure, grid: { nodes: number } | { cells: number }, storage: 'plain' | 'fourthOrder') =>

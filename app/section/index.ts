@@ -1,2 +1,0 @@
-/** Doors of the section. */
-export { default as SectionPanel } from './SectionPanel.vue';

@@ -1,2 +1,0 @@
-/** Doors of the timeline. */
-export { default as TimelinePanel } from './TimelinePanel.vue';
