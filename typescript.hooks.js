@@ -2,7 +2,7 @@
  * Lets plain Node (from 22.18 on, which strips types by itself) run our TypeScript as it stands:
  * resolves './file' to './file.ts' and './folder' to './folder/index.ts'. Use: node --import ./typescript.hooks.js FILE
  */
-import { existsSync } from 'node:fs';
+import { existsSync, statSync } from 'node:fs';
 import { registerHooks } from 'node:module';
 import { fileURLToPath } from 'node:url';
 
@@ -12,7 +12,7 @@ registerHooks({
     const url = new URL(specifier, context.parentURL);
     const path = fileURLToPath(url);
     if (existsSync(`${path}.ts`)) return nextResolve(`${specifier}.ts`, context);
-    if (existsSync(`${path}/index.ts`)) return nextResolve(`${specifier}/index.ts`, context);
+    if (existsSync(path) && statSync(path).isDirectory()) return nextResolve(`${specifier}/index.ts`, context);
     return nextResolve(specifier, context);
   },
 });

@@ -5,9 +5,6 @@ import { indexOfId, writeAt } from './edit';
 import { depthOf } from './probes';
 import { rampAt, schedulePath } from './segments';
 
-/** Twelve digits: 0.076 − 0.001 is 0.075, not 0.07500000000000001. */
-const tidy = (value: number): number => Number(value.toPrecision(12));
-
 /**
  * Moves the far edge of a layer so that the layer becomes `thickness` thick. The edge alone moves: the layer after it gives
  * or takes the difference; at the end face the part grows or shrinks. Does nothing where a layer would be used up.
@@ -20,7 +17,8 @@ export const moveEdge = (layer: Layer, thickness: number, text: string): Command
     if (index < 0 || !(thickness > 0)) return project;
     const moved = writeAt(project, ['part', 'layers', index, 'thickness'], thickness);
     if (index === layers.length - 1) return moved;
-    const rest = tidy(layers[index].thickness + layers[index + 1].thickness - thickness);
+    // Twelve digits: 0.076 − 0.001 is 0.075, not 0.07500000000000001.
+    const rest = Number((layers[index].thickness + layers[index + 1].thickness - thickness).toPrecision(12));
     return rest > 0 ? writeAt(moved, ['part', 'layers', index + 1, 'thickness'], rest) : project;
   },
 });
@@ -39,10 +37,10 @@ export function placeNear(depth: number, layers: readonly Layer[], before: Place
     if (Math.abs(inside - edge) <= reach) return { interface: layer.id, side: inside <= edge ? 'before' : 'after' };
   }
   if (!('fraction' in before)) return { depth: inside };
-  if (before.layer === undefined) return { fraction: tidy(inside / total) };
+  if (before.layer === undefined) return { fraction: inside / total };
   const from = depthOf({ ...before, fraction: 0 }, layers);
   const to = depthOf({ ...before, fraction: 1 }, layers);
-  return inside > from && inside < to ? { ...before, fraction: tidy((inside - from) / (to - from)) } : { depth: inside };
+  return inside > from && inside < to ? { ...before, fraction: (inside - from) / (to - from) } : { depth: inside };
 }
 
 /** What is pulled at the end of a segment: the value reached, or how long it takes (s). */

@@ -1,5 +1,5 @@
 /** Edits of what a face meets during a stage. */
-import type { Exposure, ExposureKind, FaceId, PlainSchedule, Stage, TemperatureSchedule } from '../../solver/model';
+import type { Coefficient, Exposure, ExposureKind, FaceId, PlainSchedule, Stage, TemperatureSchedule } from '../../solver/model';
 import { valueAt } from '../../solver/model';
 import { called, type Command, type Entered } from './command';
 import { enterAt, indexOfId, writeAt } from './edit';
@@ -10,16 +10,17 @@ export const EXPOSURE_NAMES: Record<ExposureKind, string> = {
   film: 'film',
   temperature: 'fixed temperature',
   flux: 'heat flux',
+  radiation: 'radiation',
   insulated: 'insulated',
 };
 
 const AIR_FILM = 10;
+export const GREY = 0.8;
 const ROOM_C = 20;
 
 /** An exposure of another kind that keeps what both kinds know: the temperature outside. */
 export function exposureOfKind(kind: ExposureKind, before: Exposure): Exposure {
-  const outside: TemperatureSchedule =
-    before.kind === 'film' ? before.surroundings : before.kind === 'temperature' ? before.temperature : ROOM_C;
+  const outside = outsideOf(before) ?? ROOM_C;
   switch (kind) {
     case 'insulated':
       return { kind };
@@ -29,7 +30,16 @@ export function exposureOfKind(kind: ExposureKind, before: Exposure): Exposure {
       return { kind, temperature: outside };
     case 'film':
       return { kind, coefficient: AIR_FILM, surroundings: outside };
+    case 'radiation':
+      return { kind, emissivity: GREY, enclosure: outside };
   }
+}
+
+/** The temperature outside that an exposure names, if any. */
+function outsideOf(exposure: Exposure): TemperatureSchedule | null {
+  if (exposure.kind === 'film') return exposure.surroundings;
+  if (exposure.kind === 'radiation') return exposure.enclosure;
+  return exposure.kind === 'temperature' ? exposure.temperature : null;
 }
 
 export const setExposureKind = (stage: Stage, face: FaceId, faceName: string, kind: ExposureKind): Command => ({
@@ -47,6 +57,7 @@ const SCHEDULE_NAMES: Record<ScheduleKey, string> = {
   surroundings: 'Surroundings',
   flux: 'Heat flux',
   coefficient: 'Film coefficient',
+  enclosure: 'Enclosure',
 };
 
 /** Replaces a whole schedule: a constant, the set-point, or ramps of its own. `text` says which for the undo list. */
@@ -55,7 +66,7 @@ export const setSchedule = (
   face: FaceId,
   faceName: string,
   key: ScheduleKey,
-  schedule: TemperatureSchedule | PlainSchedule,
+  schedule: TemperatureSchedule | PlainSchedule | Coefficient,
   text: string,
 ): Command => ({
   name: `${SCHEDULE_NAMES[key]} at ${faceName} in ${called(stage, 'stage')}: ${text}`,
@@ -86,5 +97,52 @@ export const copyExposuresFromBefore = (stage: Stage): Command => ({
     if (before === undefined) return project;
     const exposures = { start: settled(before.exposures.start), end: settled(before.exposures.end) };
     return changeStage(project, stage, (item) => ({ ...item, exposures }));
+  },
+});
+
+/** Grey radiation beside a film: to its surroundings, or to an enclosure of its own; null: none. */
+export const setRadiation = (
+  stage: Stage,
+  face: FaceId,
+  faceName: string,
+  radiation: { emissivity: number; enclosure?: TemperatureSchedule } | null,
+): Command => {
+  const text = radiation === null ? 'none' : radiation.enclosure === undefined ? 'to the surroundings' : 'to an enclosure';
+  return {
+    name: `Radiation at ${faceName} in ${called(stage, 'stage')}: ${text}`,
+    apply: (project) => {
+      const index = indexOfId(project.cycle.stages, stage.id);
+      if (index < 0 || project.cycle.stages[index].exposures[face].kind !== 'film') return project;
+      return writeAt(project, ['cycle', 'stages', index, 'exposures', face, 'radiation'], radiation ?? undefined);
+    },
+  };
+};
+
+/** Emissivity of a face that radiates, alone or beside a film. */
+export const setEmissivity = (stage: Stage, face: FaceId, faceName: string, entered: Entered): Command => ({
+  name: `Emissivity at ${faceName} in ${called(stage, 'stage')} to ${entered.text}`,
+  apply: (project) => {
+    const index = indexOfId(project.cycle.stages, stage.id);
+    const exposure = project.cycle.stages[index]?.exposures[face];
+    const path = ['cycle', 'stages', index, 'exposures', face];
+    if (exposure?.kind === 'radiation') return enterAt(project, [...path, 'emissivity'], entered);
+    const beside = exposure?.kind === 'film' && exposure.radiation !== undefined;
+    return beside ? enterAt(project, [...path, 'radiation', 'emissivity'], entered) : project;
+  },
+});
+
+/** A number of a correlation: its length, m, or the velocity of the stream, m/s. */
+export const setCorrelationNumber = (
+  stage: Stage,
+  face: FaceId,
+  faceName: string,
+  key: 'length' | 'velocity',
+  entered: Entered,
+): Command => ({
+  name: `${key === 'length' ? 'Length' : 'Velocity'} of the correlation at ${faceName} in ${called(stage, 'stage')} to ${entered.text}`,
+  apply: (project) => {
+    const index = indexOfId(project.cycle.stages, stage.id);
+    const path = ['cycle', 'stages', index, 'exposures', face, 'coefficient', key];
+    return valueAt(project, path) === undefined ? project : enterAt(project, path, entered);
   },
 });

@@ -1,6 +1,7 @@
 /** Doors of the commands: pure edits of a plan, a file for each part of the document. */
 export { applyCommand, called, together, type Command, type Entered } from './command';
 export { parsePlace, typedAt } from './typed';
+export { indexOfId } from './edit';
 export { setNotes, setTitle } from './document';
 export {
   addLayer,
@@ -11,6 +12,8 @@ export {
   renameFace,
   renameLayer,
   setContact,
+  setContactKind,
+  setGapNumber,
   setLayerMaterial,
   setThickness,
 } from './layers';
@@ -21,11 +24,27 @@ export {
   isMaterialUsed,
   removeMaterial,
   renameMaterial,
+  setLatent,
+  setLatentNumber,
+  setMaterialCurve,
   setMaterialProperty,
   setMaterialSource,
+  setReaction,
+  setReactionNumber,
   type MaterialProperty,
 } from './materials';
-export { makeStartPerLayer, makeStartUniform, setStartTemperature, startTemperature, startTemperaturePath } from './initial';
+export {
+  makeStartPerLayer,
+  makeStartProfile,
+  makeStartSteady,
+  makeStartUniform,
+  setStartProfile,
+  setStartTemperature,
+  startTemperature,
+  startTemperaturePath,
+} from './initial';
+export { faceKind, PART_KINDS, setInnerRadius, setPartKind } from './part';
+export { setSource, setSourceNumber, sourceOf } from './sources';
 export {
   addProbe,
   depthOf,
@@ -64,7 +83,17 @@ export {
   type SegmentKind,
   type SegmentNumber,
 } from './segments';
-export { copyExposuresFromBefore, EXPOSURE_NAMES, setExposureKind, setSchedule, setScheduleNumber } from './exposures';
+export {
+  copyExposuresFromBefore,
+  EXPOSURE_NAMES,
+  GREY,
+  setCorrelationNumber,
+  setEmissivity,
+  setExposureKind,
+  setRadiation,
+  setSchedule,
+  setScheduleNumber,
+} from './exposures';
 export {
   addRequirement,
   duplicateRequirement,

@@ -1,18 +1,30 @@
-/** The state at the start: one temperature, or one for each layer. */
-import type { Initial, Layer, Project } from '../../solver/model';
+/** The state at the start: one temperature, one for each layer, a profile over depth, or a steady state. */
+import type { Initial, Layer, Project, Stage } from '../../solver/model';
+import { partThickness } from '../../solver/model';
 import { called, type Command, type Entered } from './command';
 import { enterAt, writeAt } from './edit';
 
-/** The temperature a layer starts from, °C; NaN where the plan gives none. */
+/** The temperature a layer starts from, °C; NaN where the plan gives it none of its own. */
 export function startTemperature(initial: Initial, layer: string): number {
   if ('temperature' in initial) return initial.temperature;
+  if (!('layers' in initial)) return Number.NaN;
   return initial.layers.find((entry) => entry.layer === layer)?.temperature ?? Number.NaN;
 }
 
-/** Path of the number that `startTemperature` gives. */
+/** Path of the number that `startTemperature` gives; of the whole state where it gives none. */
 export function startTemperaturePath(initial: Initial, layer: string): (string | number)[] {
   if ('temperature' in initial) return ['initial', 'temperature'];
+  if (!('layers' in initial)) return ['initial'];
   return ['initial', 'layers', initial.layers.findIndex((entry) => entry.layer === layer), 'temperature'];
+}
+
+const ROOM_C = 20;
+
+/** A temperature to begin another kind of start from: the one the layer has, or that of the profile at the start face. */
+function nearStart(initial: Initial, layer: string): number {
+  if ('profile' in initial) return initial.profile[0][1];
+  const own = startTemperature(initial, layer);
+  return Number.isFinite(own) ? own : ROOM_C;
 }
 
 /** One temperature for the whole part: that of the first layer. */
@@ -21,7 +33,7 @@ export const makeStartUniform = (): Command => ({
   apply: (project) =>
     'temperature' in project.initial
       ? project
-      : writeAt(project, ['initial'], { temperature: startTemperature(project.initial, project.part.layers[0].id) }),
+      : writeAt(project, ['initial'], { temperature: nearStart(project.initial, project.part.layers[0].id) }),
 });
 
 /** A temperature for each layer, at first the one they share. */
@@ -31,7 +43,36 @@ export const makeStartPerLayer = (): Command => ({
 });
 
 const perLayer = (project: Project): Initial => ({
-  layers: project.part.layers.map((layer) => ({ layer: layer.id, temperature: startTemperature(project.initial, layer.id) })),
+  layers: project.part.layers.map((layer) => ({ layer: layer.id, temperature: nearStart(project.initial, layer.id) })),
+});
+
+/** A profile over depth: at first straight from the start of the first layer to that of the last. */
+export const makeStartProfile = (): Command => ({
+  name: 'Start with a profile over depth',
+  apply: (project) => {
+    if ('profile' in project.initial) return project;
+    const { layers } = project.part;
+    const [first, last] = [layers[0], layers[layers.length - 1]].map(({ id }) => nearStart(project.initial, id));
+    const depth = Number(partThickness(project.part).toPrecision(6));
+    return writeAt(project, ['initial'], {
+      profile: [
+        [0, first],
+        [depth, last],
+      ],
+    });
+  },
+});
+
+/** Points [depth in m, °C] of the profile at the start. */
+export const setStartProfile = (profile: [number, number][]): Command => ({
+  name: `Profile at the start, ${profile.length} points`,
+  apply: (project) => ('profile' in project.initial ? writeAt(project, ['initial', 'profile'], profile) : project),
+});
+
+/** The steady state under what the faces meet in a stage, their schedules at their first value. */
+export const makeStartSteady = (stage: Stage): Command => ({
+  name: `Start from the steady state of ${called(stage, 'stage')}`,
+  apply: (project) => writeAt(project, ['initial'], { steady: stage.exposures }),
 });
 
 /** The start temperature of a layer, or of the whole part where the start is uniform. */
@@ -39,6 +80,7 @@ export const setStartTemperature = (layer: Layer, entered: Entered): Command => 
   name: `Start temperature of ${called(layer, 'layer')} to ${entered.text}`,
   apply: (project) => {
     const { initial } = project;
+    if ('profile' in initial || 'steady' in initial) return project;
     if ('layers' in initial && !initial.layers.some((entry) => entry.layer === layer.id)) {
       return writeAt(project, ['initial', 'layers'], [...initial.layers, { layer: layer.id, temperature: entered.value }]);
     }

@@ -1,8 +1,9 @@
-import { MAX_LAYERS, type FaceId, type Layer, type Project } from '../../solver/model';
+import { MAX_LAYERS, type Contact, type FaceId, type Layer, type Project } from '../../solver/model';
 import { called, type Command, type Entered } from './command';
 import { changeById, enterAt, indexOfId, insertAfter, moveItem, writeAt } from './edit';
 import { freeName, newId } from './ids';
 import { keepProbePlaces } from './probes';
+import { withoutSource } from './sources';
 
 /** A layer like the one before it, to be changed. */
 export function nextLayer(project: Project, after: number): Layer {
@@ -34,7 +35,7 @@ export const duplicateLayer = (project: Project, layer: Layer): Command => ({
 function insertLayer(project: Project, layer: Layer, after: number): Project {
   const layers = insertAfter(project.part.layers, after, layer);
   const { initial } = project;
-  if ('temperature' in initial) return writeAt(project, ['part', 'layers'], layers);
+  if (!('layers' in initial)) return writeAt(project, ['part', 'layers'], layers);
   const neighbour = project.part.layers[Math.max(after, 0)];
   const temperature = initial.layers.find((entry) => entry.layer === neighbour.id)?.temperature ?? 20;
   return {
@@ -44,7 +45,7 @@ function insertLayer(project: Project, layer: Layer, after: number): Project {
   };
 }
 
-/** Removes a layer; the last one stays. Probes that were tied to it keep their depth. */
+/** Removes a layer and the heat sources in it; the last layer stays. Probes that were tied to it keep their depth. */
 export const removeLayer = (layer: Layer): Command => ({
   name: `Remove layer ${called(layer, 'layer')}`,
   apply: (project) => {
@@ -54,6 +55,7 @@ export const removeLayer = (layer: Layer): Command => ({
     return keepProbePlaces(project, {
       ...project,
       part: { ...project.part, layers },
+      cycle: { ...project.cycle, stages: project.cycle.stages.map((stage) => withoutSource(stage, layer.id)) },
       initial: 'layers' in initial ? { layers: initial.layers.filter((entry) => entry.layer !== layer.id) } : initial,
     });
   },
@@ -96,6 +98,27 @@ export const setThickness = (layer: Layer, entered: Entered): Command => ({
 export const setContact = (layer: Layer, entered: Entered): Command => ({
   name: `Contact after ${called(layer, 'layer')} to ${entered.value === 0 ? 'bonded' : entered.text}`,
   apply: (project) => enterLayer(project, layer, 'contact', entered),
+});
+
+/** Between this layer and the next: a resistance, or a gap of still air whose walls radiate. */
+export const setContactKind = (layer: Layer, contact: Contact): Command => ({
+  name: `Contact after ${called(layer, 'layer')}: ${typeof contact === 'number' ? 'a resistance' : 'an air gap'}`,
+  apply: (project) => {
+    const index = indexOfId(project.part.layers, layer.id);
+    const isSame = index < 0 || typeof project.part.layers[index].contact === typeof contact;
+    return isSame ? project : writeAt(project, ['part', 'layers', index, 'contact'], contact);
+  },
+});
+
+/** Width of the gap after a layer, or the emissivity of one of its walls (0: of this layer, 1: of the next). */
+export const setGapNumber = (layer: Layer, which: 'gap' | 0 | 1, entered: Entered): Command => ({
+  name: `${which === 'gap' ? 'Gap' : 'Emissivity at the gap'} after ${called(layer, 'layer')} to ${entered.text}`,
+  apply: (project) => {
+    const index = indexOfId(project.part.layers, layer.id);
+    if (index < 0 || typeof project.part.layers[index].contact === 'number') return project;
+    const inner = which === 'gap' ? ['gap'] : ['emissivities', which];
+    return enterAt(project, ['part', 'layers', index, 'contact', ...inner], entered);
+  },
 });
 
 function enterLayer(project: Project, layer: Layer, key: 'thickness' | 'contact', entered: Entered): Project {

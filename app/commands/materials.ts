@@ -1,4 +1,5 @@
-import type { Material, Project } from '../../solver/model';
+import type { Curve, Latent, Material, Project, Reaction } from '../../solver/model';
+import { valueAt } from '../../solver/model';
 import { called, type Command, type Entered } from './command';
 import { changeById, enterAt, indexOfId, writeAt } from './edit';
 import { freeName, newId } from './ids';
@@ -65,5 +66,54 @@ export const setMaterialProperty = (material: Material, property: MaterialProper
   apply: (project) => {
     const index = indexOfId(project.materials, material.id);
     return index < 0 ? project : enterAt(project, ['materials', index, property], entered);
+  },
+});
+
+/** A property as a number, a table over temperature, or an expression of T. `text` says which for the undo list. */
+export const setMaterialCurve = (material: Material, property: MaterialProperty, curve: Curve, text: string): Command => ({
+  name: `${PROPERTY_NAMES[property]} of ${called(material, 'material')}: ${text}`,
+  apply: (project) => {
+    const index = indexOfId(project.materials, material.id);
+    return index < 0 ? project : writeAt(project, ['materials', index, property], curve);
+  },
+});
+
+/** The latent heats of a material; none drops them. */
+export const setLatent = (material: Material, latent: Latent[]): Command => ({
+  name: `Latent heat of ${called(material, 'material')}: ${latent.length === 0 ? 'none' : `${latent.length}`}`,
+  apply: (project) => {
+    const index = indexOfId(project.materials, material.id);
+    return index < 0 ? project : writeAt(project, ['materials', index, 'latent'], latent.length === 0 ? undefined : latent);
+  },
+});
+
+const LATENT_NAMES = { heat: 'Latent heat', from: 'Start of the change', to: 'End of the change' } as const;
+
+/** One number of a latent heat: J/kg, or the temperature where the change begins or is complete. */
+export const setLatentNumber = (material: Material, at: number, key: keyof Latent, entered: Entered): Command => ({
+  name: `${LATENT_NAMES[key]} of ${called(material, 'material')} to ${entered.text}`,
+  apply: (project) => {
+    const index = indexOfId(project.materials, material.id);
+    const there = project.materials[index]?.latent?.[at] !== undefined;
+    return there ? enterAt(project, ['materials', index, 'latent', at, key], entered) : project;
+  },
+});
+
+/** The reaction in a material; null: none. */
+export const setReaction = (material: Material, reaction: Reaction | null): Command => ({
+  name: `Reaction in ${called(material, 'material')}: ${reaction === null ? 'none' : reaction.kind}`,
+  apply: (project) => {
+    const index = indexOfId(project.materials, material.id);
+    return index < 0 ? project : writeAt(project, ['materials', index, 'reaction'], reaction ?? undefined);
+  },
+});
+
+/** One number of the reaction in a material, at a path inside it. */
+export const setReactionNumber = (material: Material, path: readonly string[], name: string, entered: Entered): Command => ({
+  name: `${name} of ${called(material, 'material')} to ${entered.text}`,
+  apply: (project) => {
+    const index = indexOfId(project.materials, material.id);
+    const there = typeof valueAt(project, ['materials', index, 'reaction', ...path]) === 'number';
+    return there ? enterAt(project, ['materials', index, 'reaction', ...path], entered) : project;
   },
 });

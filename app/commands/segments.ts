@@ -4,7 +4,7 @@ import { valueAt } from '../../solver/model';
 import { called, type Command, type Entered } from './command';
 import { enterAt, indexOfId, insertAfter, moveItem, writeAt } from './edit';
 
-export type ScheduleKey = 'temperature' | 'surroundings' | 'flux' | 'coefficient';
+export type ScheduleKey = 'temperature' | 'surroundings' | 'flux' | 'coefficient' | 'enclosure';
 /** Which schedule of a stage is meant: its set-point, or one of the quantities of a face. */
 export type ScheduleOf = 'setPoint' | { face: FaceId; key: ScheduleKey };
 
@@ -22,7 +22,9 @@ export function schedulePath(project: Project, stage: { id: string }, of: Schedu
   const index = indexOfId(project.cycle.stages, stage.id);
   if (index < 0) return null;
   const path = ['cycle', 'stages', index];
-  return of === 'setPoint' ? [...path, 'setPoint'] : [...path, 'exposures', of.face, of.key];
+  if (of === 'setPoint') return [...path, 'setPoint'];
+  const beside = of.key === 'enclosure' && project.cycle.stages[index].exposures[of.face].kind === 'film';
+  return [...path, 'exposures', of.face, ...(beside ? ['radiation'] : []), of.key];
 }
 
 /** The ramp there; the set-point of a stage without one is a ramp without segments; null where it is none. */

@@ -19,8 +19,14 @@ export function settled(exposure: Exposure): Exposure {
       return { ...exposure, temperature: still(exposure.temperature) };
     case 'flux':
       return { ...exposure, flux: still(exposure.flux) };
-    case 'film':
-      return { ...exposure, coefficient: still(exposure.coefficient), surroundings: still(exposure.surroundings) };
+    case 'radiation':
+      return { ...exposure, enclosure: still(exposure.enclosure) };
+    case 'film': {
+      const { coefficient, surroundings, radiation } = exposure;
+      const settledFilm = { ...exposure, coefficient: still(coefficient), surroundings: still(surroundings) };
+      if (radiation?.enclosure === undefined) return settledFilm;
+      return { ...settledFilm, radiation: { ...radiation, enclosure: still(radiation.enclosure) } };
+    }
   }
 }
 

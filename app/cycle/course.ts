@@ -1,8 +1,16 @@
 /** A ramp said in words, and where each of its segments starts. */
-import { rampDuration, segmentDuration, type LaidCycle, type Ramp, type Segment } from '../../solver/model';
-import { formatQuantity, type QuantityKind, type UnitSystem } from '../../solver/model/quantities';
+import {
+  courseAt,
+  rampDuration,
+  segmentDuration,
+  type Course,
+  type LaidCycle,
+  type LaidExposure,
+  type Ramp,
+  type Segment,
+} from '../../solver/model';
+import { formatDuration, formatQuantity, type QuantityKind, type UnitSystem } from '../../solver/model/quantities';
 import type { ScheduleKey, ScheduleOf, SegmentKind } from '../commands';
-import { roundTime } from '../ui';
 
 /** Kind of the values of a schedule. */
 export const kindOfSchedule = (of: ScheduleOf): QuantityKind => {
@@ -10,13 +18,29 @@ export const kindOfSchedule = (of: ScheduleOf): QuantityKind => {
   return key === 'flux' ? 'heatFlux' : key === 'coefficient' ? 'filmCoefficient' : 'temperature';
 };
 
+/** The course of a quantity of an exposure; null where it has none over time. */
+export function laidCourse(exposure: LaidExposure, key: ScheduleKey): Course | null {
+  switch (exposure.kind) {
+    case 'insulated':
+      return null;
+    case 'temperature':
+      return key === 'temperature' ? exposure.temperature : null;
+    case 'flux':
+      return key === 'flux' ? exposure.flux : null;
+    case 'film':
+      if (key === 'surroundings') return exposure.surroundings;
+      if (key === 'enclosure') return exposure.radiation?.enclosure ?? null;
+      return key === 'coefficient' && exposure.coefficient.kind === 'course' ? exposure.coefficient.course : null;
+  }
+}
+
 /** The value at which a schedule enters a stage; NaN where it is not known. */
 export function valueAtStart(laid: LaidCycle | null, stageIndex: number, of: ScheduleOf): number {
   const stage = laid?.stages[stageIndex];
   if (stage === undefined) return Number.NaN;
   if (of === 'setPoint') return stage.setPoint.value[0];
-  const exposure = stage.exposures[of.face] as unknown as Record<string, { value: number[] } | undefined>;
-  return exposure[of.key]?.value[0] ?? Number.NaN;
+  const course = laidCourse(stage.exposures[of.face], of.key);
+  return course === null ? Number.NaN : courseAt(course, stage.start);
 }
 
 export interface SegmentCourse {
@@ -60,7 +84,7 @@ export function segmentOfKind(kind: SegmentKind, { segment, from, duration }: Se
   }
 }
 
-/** "to 180 °C at 20 K/h", "to 180 °C in 3 h", "3 segments to 550 °C, 12 h", "holds". */
+/** "to 180 °C at 20 K/h", "to 180 °C in 3 h 00 min", "3 segments, to 550 °C, 12 h 00 min", "holds". */
 export function courseInWords(ramp: Ramp, entry: number, system: UnitSystem): string {
   const { segments } = ramp;
   if (segments.length === 0) return ramp.start === undefined ? 'holds' : `from ${value(ramp.start, system)}`;
@@ -68,14 +92,14 @@ export function courseInWords(ramp: Ramp, entry: number, system: UnitSystem): st
   const last = segments.filter((segment) => 'to' in segment).at(-1);
   const target = last === undefined ? '' : ` to ${value(last.to, system)}`;
   const length = rampDuration(ramp, entry);
-  return `${segments.length} segments${target}${Number.isFinite(length) ? `, ${roundTime(length)}` : ''}`;
+  return `${segments.length} segments${target}${Number.isFinite(length) ? `, ${formatDuration(length)}` : ''}`;
 }
 
 const value = (celsius: number, system: UnitSystem): string => formatQuantity(celsius, 'temperature', system).text;
 
 function segmentInWords(segment: Segment, system: UnitSystem): string {
-  if ('hold' in segment) return `holds for ${roundTime(segment.hold)}`;
+  if ('hold' in segment) return `holds for ${formatDuration(segment.hold)}`;
   const to = `to ${value(segment.to, system)}`;
   if ('rate' in segment) return `${to} at ${formatQuantity(segment.rate, 'temperatureRate', system).text}`;
-  return segment.duration === 0 ? `jumps ${to}` : `${to} in ${roundTime(segment.duration)}`;
+  return segment.duration === 0 ? `jumps ${to}` : `${to} in ${formatDuration(segment.duration)}`;
 }

@@ -2,15 +2,22 @@
 import {
   EXPOSURE_NAMES,
   renameFace,
+  faceKind,
+  setEmissivity,
   setExposureKind,
   setSchedule,
   setScheduleNumber,
   typedAt,
   type ScheduleKey,
 } from '../commands';
-import { countOf, orKind, type Cell, type Column, type Row } from '../ui';
+import { countOf, curveInWords, expressionRefusal, orKind, type Cell, type Column, type Row } from '../ui';
 import {
+  courseAt,
+  facesOf,
   FACES,
+  FILM_VARIABLES,
+  TIME_VARIABLES,
+  type Coefficient,
   type ExposureKind,
   type FaceId,
   type LaidStage,
@@ -20,6 +27,7 @@ import {
   type TemperatureSchedule,
 } from '../../solver/model';
 import type { QuantityKind, UnitSystem } from '../../solver/model/quantities';
+import { laidCourse } from './course';
 
 export const exposureColumns = (system: UnitSystem): readonly Column[] => [
   { head: '' },
@@ -29,13 +37,14 @@ export const exposureColumns = (system: UnitSystem): readonly Column[] => [
   { head: 'Value', width: system === 'SI' ? '92px' : '116px', align: 'right' },
 ];
 
-const KINDS: readonly ExposureKind[] = ['film', 'temperature', 'flux', 'insulated'];
+const KINDS: readonly ExposureKind[] = ['film', 'radiation', 'temperature', 'flux', 'insulated'];
 const NOTHING: Cell = { kind: 'shown', text: '' };
 
 export const faceName = (project: Project, face: FaceId): string =>
-  orKind(project.part.faces[face].name, face === 'start' ? 'start face' : 'end face');
+  orKind(project.part.faces[face].name, faceKind(project.part, face));
 
 interface At {
+  system: UnitSystem;
   project: Project;
   stage: Stage;
   stageIndex: number;
@@ -43,9 +52,9 @@ interface At {
   face: FaceId;
 }
 
-export const exposureRows = (project: Project, stageIndex: number, laid: LaidStage | undefined): Row[] =>
-  FACES.map((face) => {
-    const at: At = { project, stage: project.cycle.stages[stageIndex], stageIndex, laid, face };
+export const exposureRows = (project: Project, stageIndex: number, laid: LaidStage | undefined, system: UnitSystem): Row[] =>
+  facesOf(project.part).map((face) => {
+    const at: At = { system, project, stage: project.cycle.stages[stageIndex], stageIndex, laid, face };
     return { id: face, label: faceName(project, face), cells: exposureCells(at), more: coefficientActions(at) };
   });
 
@@ -60,7 +69,9 @@ function exposureCells(at: At): Cell[] {
         ? outsideCells(at, 'temperature', exposure.temperature)
         : exposure.kind === 'flux'
           ? outsideCells(at, 'flux', exposure.flux)
-          : [NOTHING, NOTHING];
+          : exposure.kind === 'radiation'
+            ? outsideCells(at, 'enclosure', exposure.enclosure)
+            : [NOTHING, NOTHING];
   return [
     {
       kind: 'text',
@@ -76,7 +87,11 @@ function exposureCells(at: At): Cell[] {
       path: [...pathOf(at), 'kind'],
       edit: (kind) => setExposureKind(stage, face, faceName(project, face), kind as ExposureKind),
     },
-    exposure.kind === 'film' ? coefficientCell(at, exposure.coefficient) : NOTHING,
+    exposure.kind === 'film'
+      ? coefficientCell(at, exposure.coefficient)
+      : exposure.kind === 'radiation'
+        ? emissivityCell(at, exposure.emissivity)
+        : NOTHING,
     ...outside,
   ];
 }
@@ -103,22 +118,54 @@ const rampCell = (at: At, key: ScheduleKey, segments: number): Cell => ({
   path: [...pathOf(at), key],
 });
 
-const coefficientCell = (at: At, schedule: PlainSchedule): Cell =>
-  typeof schedule === 'number'
-    ? numberCell(at, 'coefficient', schedule, 'filmCoefficient', 'Film coefficient', 0)
-    : rampCell(at, 'coefficient', schedule.segments.length);
+/** A table over the temperature of the face and a correlation are shown in words and edited below the table. */
+function coefficientCell(at: At, coefficient: Coefficient): Cell {
+  const { system } = at;
+  if (typeof coefficient === 'number')
+    return numberCell(at, 'coefficient', coefficient, 'filmCoefficient', 'Film coefficient', 0);
+  if ('segments' in coefficient) return rampCell(at, 'coefficient', coefficient.segments.length);
+  if ('expression' in coefficient) return expressionCell(at, 'coefficient', coefficient.expression, FILM_VARIABLES);
+  return { kind: 'shown', text: curveInWords(coefficient, system), path: [...pathOf(at), 'coefficient'] };
+}
 
-type Source = 'constant' | 'setPoint' | 'ramps';
+function emissivityCell(at: At, emissivity: number): Cell {
+  const { project, stage, face } = at;
+  const path = [...pathOf(at), 'emissivity'];
+  return {
+    kind: 'quantity',
+    spec: { name: 'Emissivity', quantity: 'fraction', bounds: { above: 0, atMost: 1 } },
+    value: emissivity,
+    prefix: 'ε',
+    typed: typedAt(project, path),
+    path,
+    edit: (entered) => setEmissivity(stage, face, faceName(project, face), entered),
+  };
+}
+
+/** In SI units: °C, W/m², W/(m²·K); t and clock in s. */
+function expressionCell(at: At, key: ScheduleKey, text: string, variables: readonly string[]): Cell {
+  const { project, stage, face } = at;
+  return {
+    kind: 'text',
+    text,
+    path: [...pathOf(at), key],
+    refuse: (next) => expressionRefusal(next, variables),
+    edit: (expression) => setSchedule(stage, face, faceName(project, face), key, { expression }, expression),
+  };
+}
+
+type Source = 'constant' | 'setPoint' | 'ramps' | 'expression';
 
 /** Where a schedule comes from, and its value. */
 function outsideCells(at: At, key: ScheduleKey, schedule: TemperatureSchedule): [Cell, Cell] {
   const { project, stage, face } = at;
   const path = [...pathOf(at), key];
-  const source: Source = typeof schedule === 'number' ? 'constant' : 'follow' in schedule ? 'setPoint' : 'ramps';
+  const source = sourceOfSchedule(schedule);
   const options: { value: Source; label: string }[] = [
     { value: 'constant', label: 'constant' },
     ...(key === 'flux' ? [] : [{ value: 'setPoint' as const, label: orKind(project.cycle.setPoint.name, 'set-point') }]),
     { value: 'ramps', label: 'own ramps' },
+    { value: 'expression', label: 'expression of t' },
   ];
   const choice: Cell = {
     kind: 'choice',
@@ -131,6 +178,7 @@ function outsideCells(at: At, key: ScheduleKey, schedule: TemperatureSchedule): 
     const kind = key === 'flux' ? 'heatFlux' : 'temperature';
     return [choice, numberCell(at, key, schedule, kind, key === 'flux' ? 'Heat flux' : 'Temperature')];
   }
+  if ('expression' in schedule) return [choice, expressionCell(at, key, schedule.expression, TIME_VARIABLES)];
   if (!('follow' in schedule)) return [choice, rampCell(at, key, schedule.segments.length)];
   const offsetPath = [...path, 'offset'];
   const offset: Cell = {
@@ -145,20 +193,30 @@ function outsideCells(at: At, key: ScheduleKey, schedule: TemperatureSchedule): 
   return [choice, offset];
 }
 
-const labelOf = (source: Source): string => ({ constant: 'constant', setPoint: 'the set-point', ramps: 'own ramps' })[source];
+const labelOf = (source: Source): string =>
+  ({ constant: 'constant', setPoint: 'the set-point', ramps: 'own ramps', expression: 'an expression of t' })[source];
+
+function sourceOfSchedule(schedule: TemperatureSchedule): Source {
+  if (typeof schedule === 'number') return 'constant';
+  if ('follow' in schedule) return 'setPoint';
+  return 'expression' in schedule ? 'expression' : 'ramps';
+}
 
 /** A schedule of another source that starts from what the face meets at the start of the stage. */
 function scheduleFrom(source: Source, at: At, key: ScheduleKey): TemperatureSchedule | PlainSchedule {
   const now = entryValue(at, key);
   if (source === 'setPoint') return { follow: 'setPoint', offset: 0 };
+  if (source === 'expression') return { expression: String(now) };
   return source === 'constant' ? now : { start: now, segments: [] };
 }
 
-function entryValue({ laid, face, stage }: At, key: ScheduleKey): number {
-  const line = (laid?.exposures[face] as Record<string, { value: number[] } | string> | undefined)?.[key];
-  if (typeof line === 'object') return Number(line.value[0].toPrecision(6));
+/** The value of a quantity of an exposure at the start of the stage, in the stored unit. */
+export function entryValue({ laid, face, stage }: Pick<At, 'laid' | 'face' | 'stage'>, key: ScheduleKey): number {
+  const course = laid === undefined ? null : laidCourse(laid.exposures[face], key);
+  if (laid !== undefined && course !== null) return Number(courseAt(course, laid.start).toPrecision(6));
   const schedule = (stage.exposures[face] as Record<string, unknown>)[key];
-  return typeof schedule === 'number' ? schedule : key === 'flux' ? 0 : 20;
+  if (typeof schedule === 'number') return schedule;
+  return key === 'flux' ? 0 : key === 'coefficient' ? 10 : 20;
 }
 
 function coefficientActions(at: At): Row['more'] {
@@ -187,9 +245,11 @@ function coefficientActions(at: At): Row['more'] {
 /** The schedules of a stage's faces that have ramps of their own. */
 export function ownRamps(stage: Stage): { face: FaceId; key: ScheduleKey }[] {
   return FACES.flatMap((face) =>
-    (['coefficient', 'surroundings', 'temperature', 'flux'] as const)
+    (['coefficient', 'surroundings', 'temperature', 'flux', 'enclosure'] as const)
       .filter((key) => {
-        const schedule = (stage.exposures[face] as Record<string, unknown>)[key];
+        const exposure = stage.exposures[face];
+        const holder = key === 'enclosure' && exposure.kind === 'film' ? (exposure.radiation ?? {}) : exposure;
+        const schedule = (holder as Record<string, unknown>)[key];
         return typeof schedule === 'object' && schedule !== null && 'segments' in schedule;
       })
       .map((key) => ({ face, key })),

@@ -26,6 +26,20 @@ export function historyAt(history: History, time: number): number | null {
   return value[i] + ((value[i + 1] - value[i]) * (time - t[i])) / (t[i + 1] - t[i]);
 }
 
+/** Times at which the history crosses a limit, straight between points; touching without crossing does not count. */
+export function crossings(history: History, limit: number): number[] {
+  const { time, value } = history;
+  const times: number[] = [];
+  for (let i = 1; i < time.length; i++) {
+    const before = value[i - 1] - limit;
+    const after = value[i] - limit;
+    if ((before < 0 && after >= 0) || (before > 0 && after <= 0)) {
+      times.push(time[i - 1] + ((time[i] - time[i - 1]) * before) / (before - after));
+    }
+  }
+  return times;
+}
+
 /** Index of the largest value, the first of equals; -1 for an empty history. */
 export function indexOfLargest(values: ArrayLike<number>): number {
   let best = -1;

@@ -1,11 +1,12 @@
 /** Doors of drawing: arrays to arrays, no framework, no canvas. */
+export { courseLine } from './courseLine';
 export { piecesBeyond } from './beyond';
 export { cividis, colourOf, difference, gradientOf, paintRow, type ColourMap } from './colours';
 export { decimate, type Points } from './decimate';
 export { placeLetters, type LetterPlace } from './curveLetters';
 export { tabSeparated, type DataTable } from './dataTable';
-export { extent, historyAt, indexAt, indexOfLargest, type History } from './history';
-export { placeLabels, type Anchor, type Box, type Placed } from './labels';
+export { crossings, extent, historyAt, indexAt, indexOfLargest, type History } from './history';
+export { placeLabels, spread, type Anchor, type Box, type Placed } from './labels';
 export { layLayers, type LayerRow } from './layers';
 export { boxOf, placeLineLabel, placePeakLabel, textWidth, type DrawnCurves, type TextPlace } from './textPlaces';
 export { areaPath, linePath } from './paths';

@@ -71,3 +71,17 @@ export function placeLabels(
     return null;
   });
 }
+
+/**
+ * Heights for a column of labels that would lie at `wanted` (rising): pushed apart to at least `gap`, kept between `top`
+ * and `bottom` as far as they fit, and moved as little as that allows.
+ */
+export function spread(wanted: readonly number[], gap: number, top: number, bottom: number): number[] {
+  const out = [...wanted];
+  for (let i = 0; i < out.length; i++) out[i] = Math.max(out[i], i === 0 ? top : out[i - 1] + gap);
+  for (let i = out.length - 1; i >= 0; i--) {
+    const limit = i === out.length - 1 ? bottom : out[i + 1] - gap;
+    if (out[i] > limit) out[i] = limit;
+  }
+  return out;
+}

@@ -42,8 +42,7 @@ export const boxOf = ({ x, y, anchor }: TextPlace, { width, height }: TextSize):
 function clearance(place: TextPlace, size: TextSize, { columns, curves, bottom, taken = [] }: DrawnCurves): number {
   const box = boxOf(place, size);
   const middle = box.y + box.height / 2;
-  const right = columns[columns.length - 1] ?? Infinity;
-  if (box.y < -1 || box.y + box.height > bottom || box.x < 0 || box.x + box.width > right) return -2;
+  if (box.y < -1 || box.y + box.height > bottom) return -2;
   if (taken.some((other) => overlaps(box, other))) return -1;
   let least = CLEAR;
   columns.forEach((column, i) => {

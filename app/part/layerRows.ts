@@ -9,6 +9,8 @@ import {
   removeLayer,
   renameLayer,
   setContact,
+  setContactKind,
+  setGapNumber,
   setLayerMaterial,
   setStartTemperature,
   setThickness,
@@ -19,7 +21,7 @@ import {
   type Command,
 } from '../commands';
 import { tintOf, type Cell, type Column, type Row } from '../ui';
-import type { Layer, Project } from '../../solver/model';
+import type { Layer, Path, Project } from '../../solver/model';
 import type { UnitSystem } from '../../solver/model/quantities';
 
 export const layerColumns = (system: UnitSystem): readonly Column[] => [
@@ -44,13 +46,15 @@ export function layerRows(project: Project, editMaterial: (id: string) => void):
     move: (by) => moveLayer(layer, by),
     remove: layers.length === 1 ? null : () => removeLayer(layer),
     removeRefusal: 'A part keeps at least one layer',
-    more: [{ label: 'Edit its material…', act: () => editMaterial(layer.material) }],
+    more: [
+      { label: 'Edit its material…', act: () => editMaterial(layer.material) },
+      ...contactActions(layer, index === layers.length - 1),
+    ],
   }));
 }
 
 function layerCells(project: Project, layer: Layer, index: number): Cell[] {
   const path = ['part', 'layers', index];
-  const startPath = startTemperaturePath(project.initial, layer.id);
   const isLast = index === project.part.layers.length - 1;
   return [
     {
@@ -79,24 +83,8 @@ function layerCells(project: Project, layer: Layer, index: number): Cell[] {
       path: [...path, 'thickness'],
       edit: (entered) => setThickness(layer, entered),
     },
-    isLast
-      ? { kind: 'shown', text: '' }
-      : {
-          kind: 'quantity',
-          spec: { name: 'Contact resistance', quantity: 'contactResistance', bounds: { atLeast: 0 }, zero: 'bonded' },
-          value: layer.contact,
-          typed: typedAt(project, [...path, 'contact']),
-          path: [...path, 'contact'],
-          edit: (entered) => setContact(layer, entered),
-        },
-    {
-      kind: 'quantity',
-      spec: { name: 'Start temperature', quantity: 'temperature' },
-      value: startTemperature(project.initial, layer.id),
-      typed: typedAt(project, startPath),
-      path: startPath,
-      edit: (entered) => setStartTemperature(layer, entered),
-    },
+    isLast ? { kind: 'shown', text: '' } : contactCell(project, layer, [...path, 'contact']),
+    startCell(project, layer),
   ];
 }
 
@@ -107,4 +95,53 @@ function chooseMaterial(project: Project, layer: Layer, id: string): Command | n
   }
   const material = project.materials.find((item) => item.id === id);
   return material === undefined ? null : setLayerMaterial(layer, material);
+}
+
+/** A resistance, or the width of an air gap; its emissivities are edited below the table. */
+function contactCell(project: Project, layer: Layer, path: Path): Cell {
+  const { contact } = layer;
+  if (typeof contact === 'number') {
+    return {
+      kind: 'quantity',
+      spec: { name: 'Contact resistance', quantity: 'contactResistance', bounds: { atLeast: 0 }, zero: 'bonded' },
+      value: contact,
+      typed: typedAt(project, path),
+      path,
+      edit: (entered) => setContact(layer, entered),
+    };
+  }
+  return {
+    kind: 'quantity',
+    spec: { name: 'Gap', quantity: 'length', bounds: { above: 0 } },
+    value: contact.gap,
+    prefix: 'air gap',
+    typed: typedAt(project, [...path, 'gap']),
+    path: [...path, 'gap'],
+    edit: (entered) => setGapNumber(layer, 'gap', entered),
+  };
+}
+
+/** A gap of a millimetre between dull walls, to begin with. */
+const GAP = { gap: 0.001, emissivities: [0.8, 0.8] as [number, number] };
+
+function contactActions(layer: Layer, isLast: boolean): NonNullable<Row['more']> {
+  if (isLast) return [];
+  return typeof layer.contact === 'number'
+    ? [{ label: 'Air gap to the next layer', command: () => setContactKind(layer, { ...GAP }) }]
+    : [{ label: 'Contact resistance instead of the gap', command: () => setContactKind(layer, 0) }];
+}
+
+function startCell(project: Project, layer: Layer): Cell {
+  const { initial } = project;
+  const path = startTemperaturePath(initial, layer.id);
+  if ('profile' in initial) return { kind: 'shown', text: 'profile', muted: true, path };
+  if ('steady' in initial) return { kind: 'shown', text: 'steady', muted: true, path };
+  return {
+    kind: 'quantity',
+    spec: { name: 'Start temperature', quantity: 'temperature' },
+    value: startTemperature(initial, layer.id),
+    typed: typedAt(project, path),
+    path,
+    edit: (entered) => setStartTemperature(layer, entered),
+  };
 }

@@ -1,4 +1,4 @@
-/** Rows of the materials table: constant properties and where they come from. */
+/** Rows of the materials table: properties, constant or over temperature, and where they come from. */
 import {
   addMaterial,
   blankMaterial,
@@ -6,13 +6,14 @@ import {
   isMaterialUsed,
   removeMaterial,
   renameMaterial,
+  setMaterialCurve,
   setMaterialProperty,
   setMaterialSource,
   typedAt,
   type MaterialProperty,
 } from '../commands';
-import { tintOf, type Cell, type Column, type QuantitySpec, type Row } from '../ui';
-import type { Material, Project } from '../../solver/model';
+import { curveInWords, expressionRefusal, tintOf, type Cell, type Column, type QuantitySpec, type Row } from '../ui';
+import type { Material, Path, Project } from '../../solver/model';
 import type { UnitSystem } from '../../solver/model/quantities';
 
 export const materialColumns = (system: UnitSystem): readonly Column[] => [
@@ -23,24 +24,24 @@ export const materialColumns = (system: UnitSystem): readonly Column[] => [
   { head: 'Source', width: '19%' },
 ];
 
-const SPECS: readonly (QuantitySpec & { quantity: MaterialProperty })[] = [
+export const PROPERTIES: readonly (QuantitySpec & { quantity: MaterialProperty })[] = [
   { name: 'Conductivity', quantity: 'conductivity', bounds: { above: 0 } },
   { name: 'Density', quantity: 'density', bounds: { above: 0 } },
   { name: 'Heat capacity', quantity: 'heatCapacity', bounds: { above: 0 } },
 ];
 
-export const materialRows = (project: Project): Row[] =>
+export const materialRows = (project: Project, system: UnitSystem): Row[] =>
   project.materials.map((material, index) => ({
     id: material.id,
     label: material.name || `material ${index + 1}`,
-    cells: materialCells(project, material, index),
+    cells: materialCells(project, material, index, system),
     insert: () => addMaterial(blankMaterial(project)),
     duplicate: () => duplicateMaterial(project, material),
     remove: isMaterialUsed(project, material.id) ? null : () => removeMaterial(material),
     removeRefusal: 'A layer is made of it',
   }));
 
-function materialCells(project: Project, material: Material, index: number): Cell[] {
+function materialCells(project: Project, material: Material, index: number, system: UnitSystem): Cell[] {
   const path = ['materials', index];
   return [
     {
@@ -51,14 +52,7 @@ function materialCells(project: Project, material: Material, index: number): Cel
       path: [...path, 'name'],
       edit: (name) => renameMaterial(material, name),
     },
-    ...SPECS.map((spec): Cell => ({
-      kind: 'quantity',
-      spec,
-      value: material[spec.quantity],
-      typed: typedAt(project, [...path, spec.quantity]),
-      path: [...path, spec.quantity],
-      edit: (entered) => setMaterialProperty(material, spec.quantity, entered),
-    })),
+    ...PROPERTIES.map((spec) => propertyCell(project, material, [...path, spec.quantity], spec, system)),
     {
       kind: 'text',
       text: material.source ?? '',
@@ -68,4 +62,33 @@ function materialCells(project: Project, material: Material, index: number): Cel
       edit: (source) => setMaterialSource(material, source),
     },
   ];
+}
+
+/** A number or an expression of T is edited in its cell; a table is shown in words and edited below. */
+function propertyCell(
+  project: Project,
+  material: Material,
+  path: Path,
+  spec: (typeof PROPERTIES)[number],
+  system: UnitSystem,
+): Cell {
+  const curve = material[spec.quantity];
+  if (typeof curve === 'number') {
+    return {
+      kind: 'quantity',
+      spec,
+      value: curve,
+      typed: typedAt(project, path),
+      path,
+      edit: (entered) => setMaterialProperty(material, spec.quantity, entered),
+    };
+  }
+  if ('table' in curve) return { kind: 'shown', text: curveInWords(curve, system), path };
+  return {
+    kind: 'text',
+    text: curve.expression,
+    path,
+    refuse: (text) => expressionRefusal(text, ['T']),
+    edit: (expression) => setMaterialCurve(material, spec.quantity, { expression }, expression),
+  };
 }

@@ -3,6 +3,7 @@ import {
   addProbe,
   depthOf,
   duplicateProbe,
+  faceKind,
   moveProbe,
   nextProbe,
   removeProbe,
@@ -17,18 +18,18 @@ import type { UnitSystem } from '../../solver/model/quantities';
 
 export const PROBE_COLUMNS: readonly Column[] = [
   { head: '' },
-  { head: 'Placed by', width: '19%' },
+  { head: 'Placed', width: '19%' },
   { head: 'Where', width: '36%' },
   { head: 'Place', width: '14%', align: 'right' },
 ];
 
 type PlaceKind = 'depth' | 'part' | 'layer' | 'face' | 'interface';
 const PLACE_KINDS: readonly { value: PlaceKind; label: string }[] = [
-  { value: 'face', label: 'face' },
-  { value: 'depth', label: 'depth' },
-  { value: 'part', label: 'part' },
-  { value: 'layer', label: 'layer' },
-  { value: 'interface', label: 'interface' },
+  { value: 'face', label: 'at a face' },
+  { value: 'depth', label: 'at a depth' },
+  { value: 'part', label: 'in the part' },
+  { value: 'layer', label: 'in a layer' },
+  { value: 'interface', label: 'at an interface' },
 ];
 
 export function placeKind(at: Place): PlaceKind {
@@ -104,8 +105,8 @@ function whereCell(project: Project, probe: Probe, index: number, place: (at: Pl
   const path = ['probes', index, 'at'];
   if ('face' in at) {
     const options = [
-      { value: 'start', label: orKind(faces.start.name, 'start face') },
-      { value: 'end', label: orKind(faces.end.name, 'end face') },
+      { value: 'start', label: orKind(faces.start.name, faceKind(project.part, 'start')) },
+      { value: 'end', label: orKind(faces.end.name, faceKind(project.part, 'end')) },
     ];
     return {
       kind: 'choice',
@@ -144,7 +145,7 @@ function whereCell(project: Project, probe: Probe, index: number, place: (at: Pl
       edit: (layer) => place({ layer, fraction: at.fraction }),
     };
   }
-  return { kind: 'shown', text: `from ${orKind(faces.start.name, 'the start face')}`, muted: true };
+  return { kind: 'shown', text: `from ${orKind(faces.start.name, `the ${faceKind(project.part, 'start')}`)}`, muted: true };
 }
 
 function numberCell(project: Project, probe: Probe, index: number, system: UnitSystem): Cell {

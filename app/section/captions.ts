@@ -25,7 +25,7 @@ const AIR = 8;
 const AIRY = 36;
 
 /**
- * One caption a layer at most: name and thickness, the name, or its number; none where not even that fits.
+ * One caption a layer at most: name and thickness, the name, the thickness, or its number; none where not even that fits.
  * The last layer may lean out over the end of the part by `overhang` pixels.
  */
 export function captionsOf(layers: readonly CaptionLayer[], overhang: number): Caption[] {
@@ -34,6 +34,7 @@ export function captionsOf(layers: readonly CaptionLayer[], overhang: number): C
     const texts = [
       { name, thickness },
       { name, thickness: '' },
+      { name: '', thickness },
       { name: layers.length > 3 ? String(layer + 1) : '', thickness: '' },
     ].filter((text) => text.name !== '' || text.thickness !== '');
     const widthOf = (text: { name: string; thickness: string }): number =>

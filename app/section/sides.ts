@@ -1,5 +1,6 @@
 /** What stands on either side of the part at a time: surroundings, a fixed temperature, a flux, or insulation. */
-import { FACES, lineAt, type FaceId, type LaidCycle, type LaidStage, type Project } from '../../solver/model';
+import { courseLine } from '../draw';
+import { courseAt, FACES, isSolid, type FaceId, type LaidCycle, type LaidStage, type Project } from '../../solver/model';
 
 export interface Side {
   face: FaceId;
@@ -22,14 +23,17 @@ export function sidesAt(plan: Project, laid: LaidCycle, time: number): Side[] {
     const exposure = stage.exposures[face];
     const own = exposures?.[face];
     if (exposure.kind === 'film') {
-      const follows = own?.kind === 'film' && typeof own.surroundings === 'object' && 'follow' in own.surroundings;
-      const name = follows ? plan.cycle.setPoint.name || 'Set-point' : 'Surroundings';
-      return { face, kind: exposure.kind, name, temperature: lineAt(exposure.surroundings, time) };
+      const schedule = own?.kind === 'film' ? own.surroundings : own?.kind === 'radiation' ? own.enclosure : null;
+      const follows = typeof schedule === 'object' && schedule !== null && 'follow' in schedule;
+      const around = own?.kind === 'radiation' ? 'Enclosure' : 'Surroundings';
+      const name = follows ? plan.cycle.setPoint.name || 'Set-point' : around;
+      return { face, kind: exposure.kind, name, temperature: courseAt(exposure.surroundings, time) };
     }
     if (exposure.kind === 'temperature') {
-      return { face, kind: exposure.kind, name: 'Held at', temperature: lineAt(exposure.temperature, time) };
+      return { face, kind: exposure.kind, name: 'Held at', temperature: courseAt(exposure.temperature, time) };
     }
-    return { face, kind: exposure.kind, name: exposure.kind === 'flux' ? 'Heat flux' : 'Insulated', temperature: null };
+    const none = isSolid(plan.part) && face === 'start' ? 'Centre' : 'Insulated';
+    return { face, kind: exposure.kind, name: exposure.kind === 'flux' ? 'Heat flux' : none, temperature: null };
   });
 }
 
@@ -37,11 +41,12 @@ export function sidesAt(plan: Project, laid: LaidCycle, time: number): Side[] {
 export function outsideRange(laid: LaidCycle): [number, number] | null {
   let low = Infinity;
   let high = -Infinity;
-  for (const { exposures } of laid.stages) {
+  for (const { exposures, start, end } of laid.stages) {
     for (const face of FACES) {
       const exposure = exposures[face];
-      const line =
+      const course =
         exposure.kind === 'film' ? exposure.surroundings : exposure.kind === 'temperature' ? exposure.temperature : null;
+      const line = course === null ? null : courseLine(course, start, end);
       for (const value of line?.value ?? []) {
         low = Math.min(low, value);
         high = Math.max(high, value);

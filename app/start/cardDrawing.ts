@@ -1,5 +1,5 @@
 /** A plan as a small drawing: its layers to scale, what its faces meet over time, and the limits of its requirements. */
-import { extent, layLayers, linearScale, linePath } from '../draw';
+import { courseLine, extent, layLayers, linearScale, linePath } from '../draw';
 import { FACES, layCycle, type FaceId, type LaidCycle, type Line, type Project } from '../../solver/model';
 import { tintOf } from '../ui';
 
@@ -58,9 +58,11 @@ function coursesOf(laid: LaidCycle): Line[] {
 /** The temperature outside a face over the whole cycle, °C; a stage that gives none leaves a gap. */
 function outsideOf(laid: LaidCycle, face: FaceId): Line {
   const whole: Line = { time: [], value: [] };
-  for (const { exposures, start } of laid.stages) {
+  for (const { exposures, start, end } of laid.stages) {
     const exposure = exposures[face];
-    const line = exposure.kind === 'film' ? exposure.surroundings : exposure.kind === 'temperature' ? exposure.temperature : null;
+    const course =
+      exposure.kind === 'film' ? exposure.surroundings : exposure.kind === 'temperature' ? exposure.temperature : null;
+    const line = course === null ? null : courseLine(course, start, end);
     whole.time.push(...(line?.time ?? [start]));
     whole.value.push(...(line?.value ?? [Number.NaN]));
   }

@@ -1,5 +1,5 @@
 /** Doors of the stores: the plan, its runs, and what is looked at. */
 export { problemsIn, useProjectStore } from './project';
-export { useRunStore } from './run';
-export { useViewStore, type TableName, type Theme } from './view';
+export { useRunStore, type Progress, type RunState } from './run';
+export { useViewStore, type FocusWish, type TableName, type Theme } from './view';
 export { useShownStore } from './shown';

@@ -75,6 +75,8 @@ export const useRunStore = defineStore('run', () => {
   /** The newest job; whatever an older one still says is dropped. */
   let asked: { project: Project; job: number; at: number } | null = null;
   let gathered: { result: Answered | null; frames: Frames | null } = { result: null, frames: null };
+  /** Whether the run in hand is over and only its uncertainty is still to come. */
+  let refining = false;
   let timer: ReturnType<typeof setTimeout> | undefined;
   let waitingSince: number | null = null;
   /** The document whose answers are on screen: answers of another document are never kept. */
@@ -116,6 +118,7 @@ export const useRunStore = defineStore('run', () => {
     if (client === null || project.problems.length > 0) return;
     const plan = project.current;
     gathered = { result: null, frames: null };
+    refining = false;
     asked = { project: plan, job: -1, at: performance.now() };
     state.value = 'solving';
     message.value = null;
@@ -131,15 +134,18 @@ export const useRunStore = defineStore('run', () => {
     if (asked === null || event.job !== asked.job) return;
     switch (event.type) {
       case 'progress':
-        progress.value = progressOf(event, performance.now() - asked.at);
+        // Values stand already; only their doubt is still on the way.
+        if (event.state !== 'refining') progress.value = progressOf(event, performance.now() - asked.at);
         return;
       case 'answers':
         gathered.result = event.result;
+        refining = event.refining === true;
         if (complete.value === null && !event.final)
           complete.value = { ...gathered, result: event.result, project: asked.project };
         return;
       case 'frames':
         gathered.frames = event.frames;
+        if (refining) settled();
         return;
       case 'done':
         return ended(event.outcomes[0]);
@@ -151,13 +157,24 @@ export const useRunStore = defineStore('run', () => {
     }
   }
 
+  /** The run is over and its values stand: they are shown at once, before their uncertainty is known. */
+  function settled(): void {
+    const { project: plan, at } = asked as { project: Project; at: number };
+    if (gathered.result === null) return;
+    complete.value = { result: gathered.result, frames: gathered.frames, project: plan };
+    stability.value = gathered.result.stability;
+    progress.value = null;
+    solveMs.value = performance.now() - at;
+    if (plan === project.current) state.value = 'live';
+  }
+
   /** Takes over what the run came to: all of it, or as far as it went; a refused run leaves the earlier answers. */
   function ended(how: Outcome): void {
     const { project: plan, at } = asked as { project: Project; at: number };
     asked = null;
     progress.value = null;
     outcome.value = how;
-    solveMs.value = performance.now() - at;
+    if (state.value !== 'live') solveMs.value = performance.now() - at;
     if (gathered.result !== null) {
       stability.value = gathered.result.stability;
       if (how.reason === 'finished' || how.reached_s > 0 || complete.value === null) {

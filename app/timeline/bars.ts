@@ -68,8 +68,8 @@ const looksOf = ({ must }: Requirement, spans: readonly Span[]): Span[] =>
 /** One short remark a row: how long a limit was broken, when it was met, or how close it came. */
 function noteOf({ must }: Requirement, answer: Answer, system: UnitSystem): BarNote | null {
   const violated = answer.spans.filter(({ kind }) => kind === 'violated');
-  const length = violated.reduce((sum, { from_s, to_s }) => sum + to_s - from_s, 0);
-  if (length > 0) {
+  if (violated.length > 0) {
+    const length = violated.reduce((sum, { from_s, to_s }) => sum + to_s - from_s, 0);
     const word = must.kind === 'staysAbove' ? 'under' : 'over';
     const last = violated[violated.length - 1];
     return { time: last.to_s, from: last.from_s, text: `${word} for ${formatDuration(length)}`, tone: 'not' };

@@ -53,28 +53,21 @@ export interface LimitLine {
   label: TextPlace;
 }
 
-/** Limits over the part of their window that is in sight; their words keep clear of curves, of each other and of other limits. */
+/** Limits over the part of their window that is in sight. */
 export function limitLines({ limits }: Curves, { time, value, width }: Plot, drawn: DrawnCurves): LimitLine[] {
-  const lines = limits.flatMap((limit, index) => {
+  const taken: Box[] = [];
+  return limits.flatMap((limit, index) => {
     const short = Math.max(0, LEAST_LINE - (time.at(limit.to) - time.at(limit.from))) / 2;
     const from = Math.max(0, time.at(limit.from) - short);
     const to = Math.min(width, time.at(limit.to) + short);
     if (to <= from) return [];
-    return [{ key: `${limit.requirement}:${index}`, from, to, y: value.at(limit.value), text: limit.text }];
-  });
-  const taken: Box[] = [];
-  return lines.map((line) => {
-    const size = { width: textWidth(line.text), height: TEXT_HEIGHT };
-    const others = lines.filter((other) => Math.abs(other.y - line.y) > 1).map((other) => heightsOf(other, drawn.columns));
-    const label = placeLineLabel(line, size, { ...drawn, curves: [...drawn.curves, ...others], taken });
+    const line = { from, to, y: value.at(limit.value) };
+    const size = { width: textWidth(limit.text), height: TEXT_HEIGHT };
+    const label = placeLineLabel(line, size, { ...drawn, taken });
     taken.push(boxOf(label, size));
-    return { ...line, label };
+    return [{ key: `${limit.requirement}:${index}`, ...line, text: limit.text, label }];
   });
 }
-
-/** A straight line as a curve over the columns. */
-const heightsOf = ({ from, to, y }: { from: number; to: number; y: number }, columns: readonly number[]): number[] =>
-  columns.map((x) => (x >= from && x <= to ? y : Number.NaN));
 
 const boxOfLimit = ({ text, label }: LimitLine): Box => boxOf(label, { width: textWidth(text), height: TEXT_HEIGHT });
 

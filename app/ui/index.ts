@@ -11,11 +11,22 @@ export { default as SheetSection } from './SheetSection.vue';
 export { default as Sign } from './Sign.vue';
 export { default as TextField } from './TextField.vue';
 export { type Cell, type Column, type Row } from './grid/cells';
+export { default as TableField } from './TableField.vue';
+export {
+  CORRELATION_WORDS,
+  curveInWords,
+  expressionRefusal,
+  readTable,
+  tableInWords,
+  tableText,
+  type TableLimits,
+} from './curveWords';
 export { problemInUnits } from './problemInUnits';
 export { type QuantitySpec } from './readEntered';
 export { tintNumber, tintOf } from './tint';
 export {
   countOf,
+  countsInWords,
   depthInWords,
   differenceInWords,
   layerName,
@@ -26,7 +37,6 @@ export {
   placeInWords,
   requirementInWords,
   requirementParts,
-  roundTime,
   stageName,
   subjectInWords,
   temperatureInWords,

@@ -1,4 +1,5 @@
 /** The plan and its answers in plain words, the same wherever they are said. */
+import { faceKind } from '../commands';
 import { formatDuration, formatQuantity, type UnitSystem } from '../../solver/model/quantities';
 import type { Answer, Counts, Place, Project, Requirement, Subject, Verdict } from '../../solver/model';
 
@@ -79,12 +80,12 @@ export function requirementInWords(requirement: Requirement, project: Project, s
 }
 
 /** A time that was set, without its empty minutes: "6 h". */
-export const roundTime = (seconds: number): string => formatDuration(seconds).replace(/ 00 (?:min|s|h)$/, '');
+const roundTime = (seconds: number): string => formatDuration(seconds).replace(/ 00 (?:min|s|h)$/, '');
 
 /** "120 mm deep", "middle of Shell", "Hot face", "Lining side of Lining / Shell". */
 export function placeInWords(at: Place, project: Project, system: UnitSystem): string {
   if ('depth' in at) return `${formatQuantity(at.depth, 'length', system, { significant: 4 }).text} deep`;
-  if ('face' in at) return orKind(project.part.faces[at.face].name, at.face === 'start' ? 'start face' : 'end face');
+  if ('face' in at) return orKind(project.part.faces[at.face].name, faceKind(project.part, at.face));
   if ('fraction' in at) {
     const where = at.layer === undefined ? 'the part' : layerName(project, at.layer);
     return at.fraction === 0.5 ? `middle of ${where}` : `${Number((at.fraction * 100).toPrecision(4))} % into ${where}`;
@@ -134,12 +135,27 @@ export function verdictNow(answer: Answer | undefined, run: { state: string; wai
 /** Digits that a temperature deserves while its uncertainty is unknown: whole degrees, tenths below 10 K of margin. */
 const decimalsFor = (size: number): number => (size < 9.95 ? 1 : 0);
 
-/** "+3 h 44 min", "−26 K": positive is good. */
+/** Digits that a doubt in K deserves: its own first one, hundredths at the finest. */
+const decimalsOf = (doubt: number): number => (doubt <= 0 ? 2 : Math.min(2, Math.max(0, -Math.floor(Math.log10(doubt)))));
+
+/** " ± 0.4 K": half the width of the 95 % interval of the margin; empty while it is not known. */
+function doubtInWords({ uncertainty, margin_unit }: Answer, system: UnitSystem): string {
+  if (uncertainty === null) return '';
+  if (margin_unit === 's') return ` ± ${uncertainty < 1 ? '1 s' : formatDuration(uncertainty)}`;
+  const least = 0.01;
+  const shown = Math.max(uncertainty, least);
+  const style = { decimals: decimalsOf(shown) };
+  return ` ± ${formatQuantity(shown, 'temperatureDifference', system, style).text}`;
+}
+
+/** "+3 h 44 min", "−26 K ± 0.4 K": positive is good; the doubt is the 95 % interval, once it is known. */
 export function marginInWords(answer: Answer, system: UnitSystem): string {
   const { margin } = answer;
   if (margin === null) return '';
-  if (answer.margin_unit === 's') return formatDuration(margin, { sign: true });
-  return formatQuantity(margin, 'temperatureDifference', system, { sign: true, decimals: decimalsFor(Math.abs(margin)) }).text;
+  const doubt = doubtInWords(answer, system);
+  if (answer.margin_unit === 's') return `${formatDuration(margin, { sign: true })}${doubt}`;
+  const decimals = answer.uncertainty === null ? decimalsFor(Math.abs(margin)) : decimalsOf(answer.uncertainty);
+  return `${formatQuantity(margin, 'temperatureDifference', system, { sign: true, decimals }).text}${doubt}`;
 }
 
 /** A temperature as an answer gives it: whole degrees. */

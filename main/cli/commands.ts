@@ -24,7 +24,8 @@ async function runFile(file: string, quiet: boolean, io: Io): Promise<{ project:
 
 /** 0 for a run that finished; otherwise its reason is said. */
 function exitOf(outcome: Outcome, file: string, io: Io): ExitCode {
-  if (outcome.reason === 'finished') return EXIT.done;
+  // Interrupted while the run was over and its uncertainty still sought.
+  if (outcome.reason === 'finished') return io.signal.aborted ? EXIT.interrupted : EXIT.done;
   io.remark(`${nameOf(file)}: ${outcome.message ?? outcome.reason}\n`);
   if (outcome.reason === 'cancelled') return EXIT.interrupted;
   return outcome.reason === 'invalid-project' ? EXIT.badPlan : EXIT.notFinished;

@@ -39,6 +39,9 @@ function answersCsv(project: Project, { answers }: RunResult): string {
     'unit',
     'margin',
     'margin_unit',
+    'uncertainty',
+    'value_uncertainty',
+    'time_uncertainty_s',
     'position_m',
   ];
   return csvText([
@@ -55,6 +58,9 @@ function answersCsv(project: Project, { answers }: RunResult): string {
       answer.unit,
       answer.margin,
       answer.margin_unit,
+      answer.uncertainty,
+      answer.value_uncertainty,
+      answer.time_uncertainty_s,
       answer.position_m,
     ]),
   ]);

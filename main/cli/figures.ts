@@ -42,6 +42,13 @@ export function marginOf({ margin, margin_unit }: Answer): string {
   return margin_unit === 's' ? formatDuration(margin, { sign: true }) : difference(margin, true);
 }
 
+/** Half the width of the 95 % interval of the margin: "± 0.012 K". */
+export function uncertaintyOf({ uncertainty, margin_unit }: Answer): string {
+  if (uncertainty === null) return NOTHING;
+  const figures = formatNumber(uncertainty, { significant: 2 });
+  return `± ${margin_unit === 's' && uncertainty >= 60 ? formatDuration(uncertainty) : `${figures} ${margin_unit}`}`;
+}
+
 /** "at 28 h 00 min, Hold"; the place too where a point of the part decided. */
 export function whenOf({ time_s, stage, position_m }: Answer, stageName: (id: string) => string): string {
   if (time_s === null || stage === null) return NOTHING;

@@ -48,12 +48,13 @@ function progressLine(project: Project, io: Io, quiet: boolean) {
   const shown = io.terminal && !quiet;
   let dirty = false;
   return {
-    show({ fraction, stage, time_s, end_s }: Extract<AboutJob, { type: 'progress' }>): void {
+    show({ fraction, stage, time_s, end_s, state }: Extract<AboutJob, { type: 'progress' }>): void {
       if (!shown) return;
       const name = project.cycle.stages.find(({ id }) => id === stage)?.name ?? stage;
       const part = `${Math.floor(100 * fraction)} %`.padStart(5);
-      io.remark(`${CLEAR_LINE}Solving ${part}, ${formatDuration(time_s)} of ${formatDuration(end_s)}, stage ${name}`);
       dirty = true;
+      if (state === 'refining') return io.remark(`${CLEAR_LINE}Refining ${part}`);
+      io.remark(`${CLEAR_LINE}Solving ${part}, ${formatDuration(time_s)} of ${formatDuration(end_s)}, stage ${name}`);
     },
     clear(): void {
       if (dirty) io.remark(CLEAR_LINE);

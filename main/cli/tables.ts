@@ -1,6 +1,18 @@
 /** The answers of a run as text that people read. */
 import { CAUTION, formatDuration, formatNumber, type Project, type Report, type Verdict } from '../../solver/model';
-import { VERDICT_WORDS, depth, difference, heat, limitOf, marginOf, temperature, valueOf, whenOf, type Answer } from './figures';
+import {
+  VERDICT_WORDS,
+  depth,
+  difference,
+  heat,
+  limitOf,
+  marginOf,
+  temperature,
+  uncertaintyOf,
+  valueOf,
+  whenOf,
+  type Answer,
+} from './figures';
 import { block, columns, type Cell } from './layout';
 
 export type Paint = (text: string, colour: 'good' | 'doubt' | 'bad') => string;
@@ -44,7 +56,7 @@ function headOf({ part, cycle }: Project, { title, layers, stages, outcome }: Re
 
 const count = (number: number, what: string): string => `${number} ${what}${number === 1 ? '' : 's'}`;
 
-/** One row a requirement: verdict, name, when, value, limit, margin. */
+/** One row a requirement: verdict, name, when, value, limit, margin and its numerical uncertainty. */
 export function answersTable(project: Project, { answers }: Report, paint: Paint): string {
   if (answers.length === 0) return '  The plan states no requirements.\n';
   const stageName = nameIn(project.cycle.stages);
@@ -57,10 +69,11 @@ export function answersTable(project: Project, { answers }: Report, paint: Paint
       valueOf(answer),
       limitOf(answer, must),
       marginOf(answer),
+      uncertaintyOf(answer),
     ];
   };
-  const head = ['Verdict', 'Requirement', 'When', 'Value', 'Limit', 'Margin'];
-  return columns([head, ...answers.map(row)], ['left', 'left', 'left', 'right', 'right', 'right']);
+  const head = ['Verdict', 'Requirement', 'When', 'Value', 'Limit', 'Margin', 'Numerical, 95 %'];
+  return columns([head, ...answers.map(row)], ['left', 'left', 'left', 'right', 'right', 'right', 'right']);
 }
 
 const nameIn =
@@ -115,7 +128,11 @@ const stagesTable = ({ stages }: Report): string =>
     ['left', 'right', 'left', 'right'],
   );
 
-function restTable({ energy, stability, solver, layers }: Report): string {
+/** "4 runs of other accuracy, order 0.93" */
+const refinementOf = ({ of, runs, order }: NonNullable<Report['refinement']>[number]): string =>
+  `${count(runs - 1, 'run')} of other ${of}${order === null ? '' : `, order ${formatNumber(order, { significant: 2 })}`}`;
+
+function restTable({ energy, stability, solver, refinement, layers }: Report): string {
   const { steps, rejected, volumes, wall_s } = solver;
   const rows = [
     [
@@ -128,6 +145,7 @@ function restTable({ energy, stability, solver, layers }: Report): string {
         `${count(volumes, 'volume')}, ${formatNumber(1000 * wall_s, { significant: 2 })} ms`,
     ],
   ];
+  if (refinement !== null) rows.push(['Uncertainty', refinement.map(refinementOf).join('; ')]);
   if (stability !== null) {
     const { explicit_limit_s, set_by } = stability;
     const layer = layers.find((entry) => entry.layer === set_by.layer)?.name ?? set_by.layer;

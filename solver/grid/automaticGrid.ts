@@ -11,9 +11,11 @@
  * at equal fractions of the integral of 1/spacing. The constants were fitted so that the error stays below the accuracy.
  */
 import type { LaidCycle } from '../model';
-import type { Sharpness, TemperatureRange } from './sharpness';
+import type { Sharpness } from './sharpness';
+import type { Shape } from './shape';
+import type { TemperatureRange } from './temperatureRange';
 import type { PlainRows, WallGrid } from './wallGrid';
-import type { WallLayer } from './wallLayers';
+import { startAt, type WallLayer } from './wallLayers';
 
 /** Growth b never exceeds this: neighbours then differ by less than 1.61, and the storage weights stay positive. */
 const LARGEST_GROWTH = 0.25;
@@ -30,6 +32,7 @@ const PLAIN_ROWS = 5;
 
 /** What the grid of a wall follows from. */
 export interface GridDemand {
+  readonly shape: Shape;
   readonly layers: readonly WallLayer[];
   readonly cycle: LaidCycle;
   /** K */
@@ -123,7 +126,8 @@ function jumpPlaces({ layers, accuracy, sharpness }: GridDemand, edges: readonly
   if (start !== null) places.push({ at: 0, first: jumpSpacing(layers[0], start, accuracy) });
   if (end !== null) places.push({ at: edges[last + 1], first: jumpSpacing(layers[last], end, accuracy) });
   for (let i = 1; i <= last; i++) {
-    if (Math.abs(layers[i].initial - layers[i - 1].initial) > accuracy) places.push({ at: edges[i], first: 0 });
+    const unequal = startAt(layers[i], 0) - startAt(layers[i - 1], layers[i - 1].thickness);
+    if (Math.abs(unequal) > accuracy) places.push({ at: edges[i], first: 0 });
   }
   return places;
 }
@@ -136,9 +140,22 @@ function sharpPlaces(demand: GridDemand, edges: readonly number[], growth: numbe
   const places = jumpPlaces(demand, edges);
   if (start !== null) places.push({ at: 0, first: rampSpacing(layers[0], start, accuracy) });
   if (end !== null) places.push({ at: edges[last + 1], first: rampSpacing(layers[last], end, accuracy) });
+  layers.forEach((layer, i) => places.push(...kinksOf(layer, edges[i], accuracy)));
   const shortestStage = Math.min(...cycle.stages.map((stage) => stage.end - stage.start));
   const smallest = 0.5 * growth * Math.sqrt(Math.min(SHORTEST_OF_CYCLE * cycle.end, SHORTEST_OF_STAGE * shortestStage));
   return places.map(({ at, first }) => ({ at, first: Math.max(first, smallest) }));
+}
+
+/** Kinks of the profile that a layer starts with: each acts like a jump of the flux by half the change of slope, on either side. */
+function kinksOf(layer: WallLayer, edge: number, accuracy: number): SharpPlace[] {
+  const { profile } = layer;
+  if (profile === null || !layer.kinked) return [];
+  const slope = (i: number): number => (profile[i + 1][1] - profile[i][1]) / (profile[i + 1][0] - profile[i][0]);
+  const metre = 1 / Math.sqrt(diffusivity(layer));
+  return profile.slice(1, -1).map(([depth], i) => ({
+    at: edge + depth * metre,
+    first: (2 * FIRST_PART * accuracy * metre) / Math.abs(slope(i + 1) - slope(i)),
+  }));
 }
 
 /** Part of the accuracy that the first moments after a jump, or at the start of a ramp, may cost. */
@@ -194,5 +211,5 @@ function placeElements(thickness: number, left: number, right: number, spacing: 
 /** The grid of the automatic scheme: graded, or of the lengths given; plain where it must be. */
 export function automaticGrid(demand: GridDemand, lengths: readonly Float64Array[] = gradedLengths(demand)): WallGrid {
   const thickness = demand.layers.map((layer) => layer.thickness);
-  return { kind: 'nodes', thickness, elements: lengths, plainRows: plainRowsOf(demand, lengths) };
+  return { shape: demand.shape, kind: 'nodes', thickness, elements: lengths, plainRows: plainRowsOf(demand, lengths) };
 }

@@ -1,6 +1,8 @@
 import type { FaceId, LaidCycle, Settings } from '../model';
 import { automaticGrid, equalCounts, type GridDemand } from './automaticGrid';
-import { sharpnessOf, type Sharpness, type TemperatureRange } from './sharpness';
+import { FLAT, type Shape } from './shape';
+import { sharpnessOf, type Sharpness } from './sharpness';
+import type { TemperatureRange } from './temperatureRange';
 import { equalGrid, type WallGrid } from './wallGrid';
 import type { WallLayer } from './wallLayers';
 
@@ -13,21 +15,22 @@ export function gridOf(
   layers: readonly WallLayer[],
   cycle: LaidCycle,
   range: TemperatureRange,
+  shape: Shape = FLAT,
 ): WallGrid {
   const { scheme, accuracy, grid } = settings;
   const sharpness = { start: sharpnessAt('start', layers[0]), end: sharpnessAt('end', layers[layers.length - 1]) };
-  const demand: GridDemand = { layers, cycle, accuracy, range, sharpness };
+  const demand: GridDemand = { shape, layers, cycle, accuracy, range, sharpness };
   if (grid === 'automatic' && scheme === 'automatic') return automaticGrid(demand);
   const thickness = layers.map((layer) => layer.thickness);
-  if (grid === 'automatic') return equalGrid('nodes', thickness, equalCounts(demand));
+  if (grid === 'automatic') return equalGrid('nodes', thickness, equalCounts(demand), shape);
   const perLayer = (counts: number | number[]) => layers.map((_, i) => (typeof counts === 'number' ? counts : counts[i]));
-  if ('cells' in grid) return equalGrid('cells', thickness, perLayer(grid.cells));
+  if ('cells' in grid) return equalGrid('cells', thickness, perLayer(grid.cells), shape);
   const elements = perLayer(grid.nodes).map((nodes) => nodes - 1);
-  const equal = equalGrid('nodes', thickness, elements);
+  const equal = equalGrid('nodes', thickness, elements, shape);
   return scheme === 'automatic' ? automaticGrid(demand, equal.elements) : equal;
 
   function sharpnessAt(face: FaceId, layer: WallLayer): Sharpness | null {
     if (cycle.stages.every((stage) => stage.exposures[face].kind === 'insulated')) return null;
-    return sharpnessOf(cycle, face, layer.initial, range);
+    return sharpnessOf(cycle, face, layer, range);
   }
 }

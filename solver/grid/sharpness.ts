@@ -4,8 +4,10 @@
  * Only bounds are wanted. The surface temperature is not known before the run, so wherever it enters, the whole range of
  * temperatures that can occur is taken.
  */
-import { FACES, lineAt, type FaceId, type LaidCycle, type LaidExposure, type Line } from '../model';
-import type { WallLayer } from './wallLayers';
+import { instantOf, NO_EXPOSURE, temperaturesOf, timesOf, type Instant } from '../materials';
+import type { FaceId, LaidCycle, LaidExposure } from '../model';
+import type { TemperatureRange } from './temperatureRange';
+import { startAt, type WallLayer } from './wallLayers';
 
 /** The strongest things that happen to a face in the cycle. */
 export interface Sharpness {
@@ -19,145 +21,75 @@ export interface Sharpness {
   temperatureRate: number;
 }
 
-/** Temperatures between which everything stays, °C; for imposed fluxes an estimate. */
-export interface TemperatureRange {
-  lowest: number;
-  highest: number;
-}
+/** A jump of a held temperature below this is rounding, K. */
+const SAME_TEMPERATURE = 1e-8;
 
-/** An exposure at one instant: the flux is imposed + coefficient × (surroundings − T); or the temperature is held. */
-interface Law {
-  held: number | null;
-  imposed: number;
-  coefficient: number;
-  surroundings: number;
-}
-
-const NO_EXPOSURE: Law = { held: null, imposed: 0, coefficient: 0, surroundings: 0 };
-
-function lawAt(exposure: LaidExposure, time: number, side: 'before' | 'after'): Law {
-  switch (exposure.kind) {
-    case 'insulated':
-      return NO_EXPOSURE;
-    case 'temperature':
-      return { ...NO_EXPOSURE, held: lineAt(exposure.temperature, time, side) };
-    case 'flux':
-      return { ...NO_EXPOSURE, imposed: lineAt(exposure.flux, time, side) };
-    case 'film':
-      return {
-        ...NO_EXPOSURE,
-        coefficient: lineAt(exposure.coefficient, time, side),
-        surroundings: lineAt(exposure.surroundings, time, side),
-      };
-  }
-}
-
-const linesOf = (exposure: LaidExposure): Line[] =>
-  Object.values(exposure).filter((value): value is Line => typeof value === 'object');
-
-const fluxOf = (law: Law, temperature: number): number => law.imposed + law.coefficient * (law.surroundings - temperature);
-
-/** Sharpness of one face over the whole cycle. `initial` is the temperature at the face at the start. */
-export function sharpnessOf(cycle: LaidCycle, face: FaceId, initial: number, range: TemperatureRange): Sharpness {
+/** Sharpness of one face over the whole cycle; `layer` is the one at that face. */
+export function sharpnessOf(cycle: LaidCycle, face: FaceId, layer: WallLayer, range: TemperatureRange): Sharpness {
   const sharpness: Sharpness = { fluxJump: 0, fluxRate: 0, temperatureJump: false, temperatureRate: 0 };
-  let last: Law | null = null;
-  for (const stage of cycle.stages) {
-    const exposure = stage.exposures[face];
-    const points = linesOf(exposure).flatMap((line) => line.time);
-    const times = [...new Set([stage.start, ...points, stage.end])]
-      .filter((time) => time >= stage.start && time <= stage.end)
-      .sort((a, b) => a - b);
+  const begins = startOf(layer, face);
+  let last: { instant: Instant; exposure: LaidExposure } | null = null;
+  for (const { start, end, exposures } of cycle.stages) {
+    const exposure = exposures[face];
+    const times = timesOf(exposure, start, end);
+    const temperatures = temperaturesOf(exposure, range.lowest, range.highest);
     for (let i = 0; i + 1 < times.length; i++) {
-      const after = lawAt(exposure, times[i], 'after');
-      if (last === null) noteJump(sharpness, { ...NO_EXPOSURE, held: after.held === null ? null : initial }, after, [initial]);
-      else noteJump(sharpness, last, after, [range.lowest, range.highest]);
-      last = lawAt(exposure, times[i + 1], 'before');
-      noteRamp(sharpness, after, last, times[i + 1] - times[i], range);
+      const after = instantOf(exposure, times[i], 'after');
+      if (last === null) {
+        const before: Instant = {
+          ...NO_EXPOSURE,
+          held: after.held === null ? null : begins.temperature,
+          flux: () => begins.flux,
+        };
+        // Where boiling sets in as the face cools, the flux rises like a jump of its own.
+        noteJump(sharpness, before, after, isSteep(exposure) ? [begins.temperature, ...temperatures] : [begins.temperature]);
+      } else {
+        const met =
+          last.exposure === exposure
+            ? temperatures
+            : [...temperatures, ...temperaturesOf(last.exposure, range.lowest, range.highest)];
+        noteJump(sharpness, last.instant, after, met);
+      }
+      last = { instant: instantOf(exposure, times[i + 1], 'before'), exposure };
+      noteRamp(sharpness, after, last.instant, times[i + 1] - times[i], temperatures);
     }
   }
   return sharpness;
 }
 
-function noteJump(sharpness: Sharpness, before: Law, after: Law, temperatures: number[]): void {
+/** Whether the film coefficient is any function of the temperature of the face, as in a quench. */
+const isSteep = (exposure: LaidExposure): boolean =>
+  exposure.kind === 'film' && (exposure.coefficient.kind === 'table' || exposure.coefficient.kind === 'expression');
+
+/** Temperature of a face at the start, °C, and the flux into the part that its profile there means, W/m². */
+function startOf(layer: WallLayer, face: FaceId): { temperature: number; flux: number } {
+  const { profile, thickness, curves } = layer;
+  const temperature = startAt(layer, face === 'start' ? 0 : thickness);
+  if (profile === null) return { temperature, flux: 0 };
+  const [near, next] = face === 'start' ? [profile[0], profile[1]] : [profile[profile.length - 1], profile[profile.length - 2]];
+  return { temperature, flux: (curves.conductivity(temperature) * (near[1] - next[1])) / Math.abs(near[0] - next[0]) };
+}
+
+function noteJump(sharpness: Sharpness, before: Instant, after: Instant, temperatures: readonly number[]): void {
   if (after.held !== null) {
-    if (before.held !== after.held) sharpness.temperatureJump = true;
+    if (before.held === null || Math.abs(before.held - after.held) > SAME_TEMPERATURE) sharpness.temperatureJump = true;
     return;
   }
   // A face let go of had the held temperature; one that was free can have had any.
   for (const temperature of before.held === null ? temperatures : [before.held]) {
-    const jump = Math.abs(fluxOf(after, temperature) - (before.held === null ? fluxOf(before, temperature) : 0));
+    const jump = Math.abs(after.flux(temperature) - (before.held === null ? before.flux(temperature) : 0));
     sharpness.fluxJump = Math.max(sharpness.fluxJump, jump);
   }
 }
 
-function noteRamp(sharpness: Sharpness, from: Law, to: Law, duration: number, range: TemperatureRange): void {
+function noteRamp(sharpness: Sharpness, from: Instant, to: Instant, duration: number, temperatures: readonly number[]): void {
   if (!(duration > 0)) return;
   if (from.held !== null && to.held !== null) {
     sharpness.temperatureRate = Math.max(sharpness.temperatureRate, Math.abs(to.held - from.held) / duration);
     return;
   }
-  for (const temperature of [range.lowest, range.highest]) {
-    const rate = Math.abs(fluxOf(to, temperature) - fluxOf(from, temperature)) / duration;
+  for (const temperature of temperatures) {
+    const rate = Math.abs(to.flux(temperature) - from.flux(temperature)) / duration;
     sharpness.fluxRate = Math.max(sharpness.fluxRate, rate);
   }
-}
-
-/** The temperatures that can occur: those of the start and of everything met, widened by what imposed fluxes may add. */
-export function temperatureRange(layers: readonly WallLayer[], cycle: LaidCycle): TemperatureRange {
-  const met = layers.map((layer) => layer.initial);
-  for (const stage of cycle.stages) {
-    for (const face of FACES) {
-      const exposure = stage.exposures[face];
-      if (exposure.kind === 'temperature') met.push(...exposure.temperature.value);
-      if (exposure.kind === 'film') met.push(...exposure.surroundings.value);
-    }
-  }
-  let lowest = Math.min(...met);
-  let highest = Math.max(...met);
-  const { heating, cooling } = riseByFlux(layers, cycle);
-  lowest -= cooling;
-  highest += heating;
-  return { lowest, highest };
-}
-
-/**
- * Estimate of what imposed fluxes add to the temperatures: stage by stage the rise of the whole part, unless the other face
- * lets the heat out first, and once the largest rise of a surface above the inside.
- */
-function riseByFlux(layers: readonly WallLayer[], cycle: LaidCycle): { heating: number; cooling: number } {
-  const sum = (of: (layer: WallLayer) => number): number => layers.reduce((total, layer) => total + of(layer), 0);
-  const capacity = sum((layer) => layer.thickness * layer.curves.heatCapacity(layer.initial));
-  const resistance = sum((layer) => layer.thickness / layer.curves.conductivity(layer.initial) + layer.contact);
-  const rise = { heating: 0, cooling: 0 };
-  const surface = { heating: 0, cooling: 0 };
-  for (const stage of cycle.stages) {
-    const duration = stage.end - stage.start;
-    const perFlux = sum((layer) => surfaceRise(layer, duration));
-    for (const face of FACES) {
-      const exposure = stage.exposures[face];
-      if (exposure.kind !== 'flux') continue;
-      const other = resistanceToOutside(stage.exposures[face === 'start' ? 'end' : 'start']);
-      for (const way of ['heating', 'cooling'] as const) {
-        const flux = Math.max(0, ...exposure.flux.value.map((value) => (way === 'heating' ? value : -value)));
-        if (flux === 0) continue;
-        rise[way] += Math.min((flux * duration) / capacity, flux * (resistance + other));
-        surface[way] = Math.max(surface[way], flux * perFlux);
-      }
-    }
-  }
-  return { heating: rise.heating + surface.heating, cooling: rise.cooling + surface.cooling };
-}
-
-/** Difference over a layer and its contact under a flux of 1 W/m² after some time, K: as a half space, or as in the steady state. */
-function surfaceRise({ curves, initial, thickness, contact }: WallLayer, duration: number): number {
-  const k = curves.conductivity(initial);
-  const half = 2 * Math.sqrt(duration / (Math.PI * k * curves.heatCapacity(initial)));
-  return Math.min(half, thickness / k) + contact;
-}
-
-/** Resistance between a face and what it meets, m²·K/W; Infinity where heat cannot leave. */
-function resistanceToOutside(exposure: LaidExposure): number {
-  if (exposure.kind === 'temperature') return 0;
-  if (exposure.kind !== 'film') return Infinity;
-  return 1 / Math.min(...exposure.coefficient.value);
 }

@@ -1,7 +1,9 @@
-/** Grids of a plane wall: where the unknowns sit. No physics beyond what chooses their number. */
+/** Grids of a layered part: where the unknowns sit. No physics beyond what chooses their number. */
+import { FLAT, type Shape } from './shape';
 
-/** A wall cut into elements, layer by layer from the start face. */
+/** A layered part cut into elements, layer by layer from the start face. */
 export interface WallGrid {
+  readonly shape: Shape;
   /** nodes: unknowns on the faces, the layer edges and the ends of all elements; cells: at the centres of the elements. */
   readonly kind: 'nodes' | 'cells';
   /** Lengths of the elements of every layer, m. Lengths, not positions: a thin layer deep in the part keeps its digits. */
@@ -19,8 +21,14 @@ export interface PlainRows {
 }
 
 /** The same number of equal elements over the whole of each layer. */
-export function equalGrid(kind: WallGrid['kind'], thickness: readonly number[], elements: readonly number[]): WallGrid {
+export function equalGrid(
+  kind: WallGrid['kind'],
+  thickness: readonly number[],
+  elements: readonly number[],
+  shape: Shape = FLAT,
+): WallGrid {
   return {
+    shape,
     kind,
     thickness,
     elements: thickness.map((whole, layer) => new Float64Array(elements[layer]).fill(whole / elements[layer])),

@@ -1,97 +1,134 @@
 /**
- * What a face exchanges during one interval.
+ * What a face exchanges during one interval, seen from its unknown.
  *
- *   q(T, t) = imposed(t) + G(t) (Ts(t) − T),   G = h/(1 + h R)      q [W/m²] positive into the part
+ * With nodes the unknown is the face itself, and the law of exchange/exchange.ts holds as it stands; a face held at a temperature
+ * holds its unknown, and the flux is whatever the balance asks for. With cells half a cell lies between, and the
+ * temperature Ts of the face, which holds no heat, follows from its own balance:
  *
- * T is the temperature of the face's unknown, Ts that of the surroundings, h the film coefficient, R [m²·K/W] the conduction
- * between the face and its unknown: 0 where the unknown is the face itself, half a cell's with cells. A face held at a
- * temperature is h without bound: G = 1/R; where R is 0 its unknown is held, and q is whatever the balance asks for.
+ *   q(Ts, t) = g (Θ(Ts) − Θ(T))        dTs (g k(Ts) − ∂q/∂Ts) = g k(T) dT + ∂q/∂t dt
+ *
+ * q [W/m²] positive into the part, T temperature of the unknown, g and Θ of the half cell.
  */
-import { lineAt, type LaidExposure, type Line } from '../model';
+import type { OutOfRange } from '../materials';
+import type { LaidExposure } from '../model';
+import { Exchange } from './exchange';
+import { crossing, type HalfCell } from './halfCell';
 import type { Interval } from './system';
 
-/** value + slope × (time since the interval began) */
-interface Straight {
-  value: number;
-  slope: number;
-}
-
-const NOTHING: Straight = { value: 0, slope: 0 };
-
-/** A line inside an interval, its ends taken from inside. */
-function straightPart(line: Line, { from, to }: Interval): Straight {
-  const value = lineAt(line, from, 'after');
-  return { value, slope: (lineAt(line, to, 'before') - value) / (to - from) };
-}
-
 export class Face {
-  private readonly resistance: number;
-  private from = 0;
-  private imposed = NOTHING;
-  private coefficient = NOTHING;
-  private surroundings = NOTHING;
-  private kind: LaidExposure['kind'] = 'insulated';
-  /** After `at`: q, ∂q/∂T and ∂q/∂t. */
+  /** After `at`: q. After `linearise`: also ∂q/∂T and ∂q/∂t. */
   flux = 0;
   fluxPerKelvin = 0;
   fluxSlope = 0;
+  private readonly half: HalfCell | null;
+  private readonly exchange = new Exchange();
 
-  /** `resistance` between face and unknown, m²·K/W. */
-  constructor(resistance: number) {
-    this.resistance = resistance;
+  /** What lies between the face and its unknown; null: nothing. */
+  constructor(half: HalfCell | null) {
+    this.half = half;
   }
 
   enter(exposure: LaidExposure, interval: Interval): void {
-    this.from = interval.from;
-    this.kind = exposure.kind;
-    this.imposed = exposure.kind === 'flux' ? straightPart(exposure.flux, interval) : NOTHING;
-    this.coefficient = exposure.kind === 'film' ? straightPart(exposure.coefficient, interval) : NOTHING;
-    this.surroundings =
-      exposure.kind === 'film'
-        ? straightPart(exposure.surroundings, interval)
-        : exposure.kind === 'temperature'
-          ? straightPart(exposure.temperature, interval)
-          : NOTHING;
+    this.exchange.enter(exposure, interval);
   }
 
   /** Whether the face's unknown is held in this interval. */
   get holds(): boolean {
-    return this.kind === 'temperature' && this.resistance === 0;
+    return this.half === null && this.exchange.heldCourse !== null;
   }
 
-  /** Rate of change of the surroundings' temperature, or of the held one, K/s. */
-  get surroundingsRate(): number {
-    return this.surroundings.slope;
+  /** The temperature that the face is held at, °C, and its rate of change, K/s. Throws where it is not held. */
+  heldAt(time: number): number {
+    return this.held.at(time);
   }
 
-  /** Temperature of the surroundings, or the held one, °C. */
-  surroundingsAt(time: number): number {
-    return this.surroundings.value + this.surroundings.slope * (time - this.from);
+  heldRateAt(time: number): number {
+    return this.held.slopeAt(time);
+  }
+
+  private get held() {
+    const course = this.exchange.heldCourse;
+    if (course === null) throw new Error('the face is not held at a temperature');
+    return course;
   }
 
   /** Evaluates the exchange with an unknown at `temperature`; nothing flows by this law where the unknown is held. */
   at(temperature: number, time: number): void {
-    const since = time - this.from;
-    let conductance = 0;
-    let conductanceSlope = 0;
-    if (this.kind === 'film') {
-      const h = this.coefficient.value + this.coefficient.slope * since;
-      const series = 1 / (1 + h * this.resistance);
-      conductance = h * series;
-      conductanceSlope = this.coefficient.slope * series * series;
-    } else if (this.kind === 'temperature' && !this.holds) {
-      conductance = 1 / this.resistance;
+    const { exchange, half } = this;
+    if (half === null) {
+      exchange.at(temperature, time);
+      this.flux = exchange.flux;
+      return;
     }
-    const difference = this.surroundings.value + this.surroundings.slope * since - temperature;
-    this.flux = this.imposed.value + this.imposed.slope * since + conductance * difference;
-    this.fluxPerKelvin = -conductance;
-    this.fluxSlope = this.imposed.slope + conductanceSlope * difference + conductance * this.surroundings.slope;
+    const surface = this.balance(half, temperature, time);
+    if (exchange.heldCourse === null) {
+      exchange.at(surface, time);
+      this.flux = exchange.flux;
+    } else {
+      this.flux = between(half, surface, temperature);
+    }
   }
 
-  /** Temperature of the face itself, °C, from that of its unknown: by the balance of the face, which holds no heat. */
+  linearise(temperature: number, time: number): void {
+    const { exchange, half } = this;
+    if (half === null) {
+      exchange.linearise(temperature, time);
+      this.flux = exchange.flux;
+      this.fluxPerKelvin = exchange.fluxPerKelvin;
+      this.fluxSlope = exchange.fluxSlope;
+      return;
+    }
+    const { curves, inverseDistance } = half;
+    const surface = this.balance(half, temperature, time);
+    const inner = inverseDistance * curves.conductivity(temperature);
+    const outer = inverseDistance * curves.conductivity(surface);
+    if (exchange.heldCourse !== null) {
+      this.flux = between(half, surface, temperature);
+      this.fluxPerKelvin = -inner;
+      this.fluxSlope = outer * exchange.heldCourse.slopeAt(time);
+      return;
+    }
+    exchange.linearise(surface, time);
+    this.flux = exchange.flux;
+    const stiffness = outer - exchange.fluxPerKelvin;
+    this.fluxPerKelvin = (exchange.fluxPerKelvin * inner) / stiffness;
+    this.fluxSlope = (exchange.fluxSlope * outer) / stiffness;
+  }
+
+  /** Temperature of the face itself, °C, from that of its unknown. */
   faceTemperature(temperature: number, time: number): number {
-    if (this.resistance === 0) return temperature;
-    this.at(temperature, time);
-    return temperature + this.flux * this.resistance;
+    return this.half === null ? temperature : this.balance(this.half, temperature, time);
+  }
+
+  /** What a correlation is used outside of, with the unknown at a temperature. */
+  outOfRange(temperature: number, time: number): OutOfRange[] {
+    return this.exchange.outOfRange(this.faceTemperature(temperature, time), time);
+  }
+
+  /** Ts from T. Started from T itself, so that it depends on nothing evaluated before. */
+  private balance({ curves, inverseDistance }: HalfCell, temperature: number, time: number): number {
+    const { exchange } = this;
+    if (exchange.heldCourse !== null) return exchange.heldCourse.at(time);
+    if (exchange.straight && curves.constant) {
+      exchange.linearise(temperature, time);
+      return temperature + exchange.flux / (inverseDistance * curves.conductivity(temperature) - exchange.fluxPerKelvin);
+    }
+    const behind = curves.conductionIntegral(temperature);
+    const { lowest, highest } = exchange.outside(time);
+    const bounded = lowest <= highest;
+    return crossing(
+      (at, out) => {
+        exchange.linearise(at, time);
+        out.value = exchange.flux - inverseDistance * (curves.conductionIntegral(at) - behind);
+        out.slope = exchange.fluxPerKelvin - inverseDistance * curves.conductivity(at);
+      },
+      temperature,
+      bounded ? Math.min(temperature, lowest) : -Infinity,
+      bounded ? Math.max(temperature, highest) : Infinity,
+    );
   }
 }
+
+/** Flux through half a cell from its surface to its unknown, W/m². */
+const between = ({ curves, inverseDistance }: HalfCell, surface: number, temperature: number): number =>
+  inverseDistance * (curves.conductionIntegral(surface) - curves.conductionIntegral(temperature));

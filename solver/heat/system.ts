@@ -1,14 +1,15 @@
 /**
  * What a scheme knows of a body: balances of heat, whatever its shape.
  *
- *   d/dt S(u) = F(u, t)        one row per unknown: S [J] heat stored, F [W] heat flowing in, both per `basis` (a wall: per m²)
+ *   d/dt S(u) = F(u, t)        one row per unknown: S [J] heat stored, F [W] heat flowing in, both per m² of a wall, per m of a
+ *                             cylinder, or of a whole sphere
  *
  * u holds the unknowns: the temperature of every node first, then whatever else the body carries (lumped bodies and readings
  * beside it, states of a reaction inside its nodes). How such rows couple is the body's own affair: `solve` may condense
  * extras node by node and solve companions as a border, and no scheme notices.
  *
  * A body promises:
- * 1. The rows of F sum to the tracked heats: whatever flows between rows cancels to rounding. That makes every scheme's audit
+ * 1. The heat rows of F sum to the tracked heats: whatever flows between rows cancels to rounding. That makes every scheme's audit
  *    close by construction.
  * 2. `evaluate` and `linearise` leave S, F and their derivatives at (u, time) in the arrays named here, which are used again.
  * 3. Inside an interval every schedule is straight, and its value at the ends is taken from inside.
@@ -18,6 +19,8 @@
  *    `heldChanges`, and `hold` books what its own storage took. All other duties hold for it as they stand.
  */
 
+import type { SymmetricTridiagonal } from '../linear';
+
 /** A stretch of cycle time with no stage edge, jump or kink strictly inside, s. */
 export interface Interval {
   readonly stage: number;
@@ -26,8 +29,9 @@ export interface Interval {
 }
 
 export interface HeatSystem {
-  /** Number of unknowns, and of rows. */
+  /** Number of unknowns, and of rows; the first `heatRows` of them store heat, the others something of their own. */
   readonly size: number;
+  readonly heatRows: number;
   /** Number of tracked heats: what enters the body through each face or from each source. */
   readonly heats: number;
   /** Whether S and F are linear in u. */
@@ -63,6 +67,12 @@ export interface HeatSystem {
   /** ∂q/∂u × x of one tracked heat. */
   rateTimes(heat: number, x: Float64Array): number;
 
+  /**
+   * The rates at which the heat rows of the last `linearise` even out, −dF/du over dS/du, in symmetric form; held rows have none.
+   * With plain storage only, where dS/du is diagonal. The matrix is used again.
+   */
+  evenOutRates(): SymmetricTridiagonal;
+
   /** Rows that are held in this interval. */
   readonly heldRows: readonly number[];
   /**
@@ -73,8 +83,8 @@ export interface HeatSystem {
   /** Sets held unknowns to their value at `time`; what their rows then store more than `stored` came through their heats. */
   hold(u: Float64Array, time: number, stored: Float64Array, through: Float64Array): void;
 
-  /** Largest change of temperature, K, that a change x of the unknowns means, and its row. The object is used again. */
-  largestChange(x: ArrayLike<number>): { kelvin: number; row: number };
+  /** Largest change of temperature, K, that a change x of unknowns u means, and its row. The object is used again. */
+  largestChange(u: ArrayLike<number>, x: ArrayLike<number>): { kelvin: number; row: number };
   /** Number of points of the reported field; `report` writes the temperatures there. */
   readonly points: number;
   report(u: Float64Array, time: number, out: Float64Array): void;

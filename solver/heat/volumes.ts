@@ -1,13 +1,14 @@
 /**
- * A wall as plain control volumes under its worst exposure: what the limits of the explicit scheme follow from.
+ * A part as plain control volumes under its worst exposure: what the limits of the explicit scheme follow from.
  *
- *   C[i] dT[i]/dt = Σ G (T[neighbour] − T[i])      C [J/(m²·K)], G [W/(m²·K)]
+ *   C[i] dT[i]/dt = Σ G (T[neighbour] − T[i])      C [J/K], G [W/K], per m² of a wall, per m of a cylinder, or of a sphere
  *
  * Symmetric by construction. A node whose temperature is held has no row.
  */
-import type { WallGrid, WallLayer } from '../grid';
-import type { LaidExposure, LaidStage } from '../model';
-import { wallRows } from './wallRows';
+import type { TemperatureRange, WallGrid, WallLayer } from '../grid';
+import { largestConductance } from '../materials';
+import { FACES, type LaidExposure, type LaidStage } from '../model';
+import { partRows } from './partRows';
 
 export interface Volumes {
   /** C of every volume. */
@@ -21,9 +22,17 @@ export interface Volumes {
   readonly depth: Float64Array;
 }
 
-/** Volumes of a wall in one stage, with the largest film coefficients that occur in it. */
-export function wallVolumes(layers: readonly WallLayer[], grid: WallGrid, exposures: LaidStage['exposures']): Volumes {
-  const rows = wallRows(layers, grid, 'plain');
+/**
+ * Volumes of a part in one stage, with the least capacities and the largest conductances, at faces and contacts too, that a range of
+ * temperatures brings. Latent heat at a point is left out: it only slows down.
+ */
+export function wallVolumes(
+  layers: readonly WallLayer[],
+  grid: WallGrid,
+  stage: Pick<LaidStage, 'start' | 'end' | 'exposures'>,
+  range: TemperatureRange,
+): Volumes {
+  const rows = partRows(layers, grid, 'plain');
   const capacity = new Float64Array(rows.size);
   const loss = new Float64Array(rows.size);
   const beside = new Float64Array(rows.size);
@@ -32,13 +41,13 @@ export function wallVolumes(layers: readonly WallLayer[], grid: WallGrid, exposu
   /** Loss over capacity within the layer that a shared node counts to so far. */
   const fastest = new Float64Array(rows.size);
   let edge = 0;
-  rows.layers.forEach(({ layer: { curves, initial, thickness }, node, count, weights, inverseDistance }, index) => {
-    const c = curves.heatCapacity(initial);
-    const k = curves.conductivity(initial);
-    let within = grid.kind === 'cells' ? grid.elements[index][0] / 2 : 0;
+  rows.layers.forEach(({ layer: { curves, thickness }, node, count, weights, shapeFactor, depth: within }, index) => {
+    const slopes = curves.slopesBetween(range.lowest, range.highest);
+    const [c] = slopes.heatCapacity;
+    const k = slopes.conductivity[1];
     for (let i = 0; i < count; i++) {
-      const left = i > 0 ? k * inverseDistance[i - 1] : 0;
-      const right = i < count - 1 ? k * inverseDistance[i] : 0;
+      const left = i > 0 ? k * shapeFactor[i - 1] : 0;
+      const right = i < count - 1 ? k * shapeFactor[i] : 0;
       const own = weights.here[i] * c;
       capacity[node + i] += own;
       loss[node + i] += left + right;
@@ -47,19 +56,24 @@ export function wallVolumes(layers: readonly WallLayer[], grid: WallGrid, exposu
       if ((left + right) / own >= fastest[node + i]) {
         fastest[node + i] = (left + right) / own;
         layer[node + i] = index;
-        depth[node + i] = edge + within;
+        depth[node + i] = edge + within[i];
       }
-      if (i < count - 1) within += 1 / inverseDistance[i];
     }
     edge += thickness;
   });
-  for (const { from, to, conductance } of rows.links) {
+  for (const { from, to, area, junction } of rows.links) {
+    junction.at(range.highest, range.highest);
+    const conductance = area * junction.perFirst;
     beside[from] = conductance;
     loss[from] += conductance;
     loss[to] += conductance;
   }
-  loss[0] += faceConductance(exposures.start, rows.faceResistance.start);
-  loss[rows.size - 1] += faceConductance(exposures.end, rows.faceResistance.end);
+  const { exposures } = stage;
+  FACES.forEach((face, i) => {
+    const half = rows.halfCells[i];
+    const inner = half === null ? 0 : 1 / (half.inverseDistance * half.curves.conductivity(range.highest));
+    loss[i === 0 ? 0 : rows.size - 1] += rows.faceArea[i] * conductanceAt(exposures[face], inner, stage, range);
+  });
   const held = (exposure: LaidExposure): boolean => exposure.kind === 'temperature' && grid.kind === 'nodes';
   const first = held(exposures.start) ? 1 : 0;
   const end = held(exposures.end) ? rows.size - 1 : rows.size;
@@ -67,9 +81,13 @@ export function wallVolumes(layers: readonly WallLayer[], grid: WallGrid, exposu
   return { capacity: free(capacity), loss: free(loss), beside: free(beside), layer: free(layer), depth: free(depth) };
 }
 
-/** Largest conductance of a face in a stage, W/(m²·K). */
-function faceConductance(exposure: LaidExposure, resistance: number): number {
-  if (exposure.kind === 'film') return 1 / (1 / Math.max(...exposure.coefficient.value) + resistance);
-  // Held where the node is the face itself: no conductance.
-  return exposure.kind === 'temperature' && resistance > 0 ? 1 / resistance : 0;
+/** Largest conductance of a face, W/(m²·K), with a resistance (m²·K/W) between it and its unknown; 0 where the unknown is held. */
+function conductanceAt(
+  exposure: LaidExposure,
+  inner: number,
+  stage: Pick<LaidStage, 'start' | 'end'>,
+  range: TemperatureRange,
+): number {
+  if (exposure.kind === 'temperature') return inner > 0 ? 1 / inner : 0;
+  return 1 / (1 / largestConductance(exposure, stage, range) + inner);
 }

@@ -88,6 +88,17 @@ export class BandMatrix {
     }
   }
 
+  /** Takes factor × another matrix away from this one's entries. */
+  subtract(factor: number, other: BandMatrix): void {
+    for (let i = 0; i < this.size; i++) {
+      this.farLower[i] -= factor * other.farLower[i];
+      this.lower[i] -= factor * other.lower[i];
+      this.diagonal[i] -= factor * other.diagonal[i];
+      this.upper[i] -= factor * other.upper[i];
+      this.farUpper[i] -= factor * other.farUpper[i];
+    }
+  }
+
   /** out = matrix × x, by the entries as they are now. */
   times(x: ArrayLike<number>, out: Float64Array): void {
     const { size, lower, diagonal, upper, farLower, farUpper } = this;

@@ -84,6 +84,8 @@ export function judge(requirement: Requirement, tally: Tally, cycle: LaidCycle, 
     unit: inSeconds ? 's' : 'difference' in requirement.of ? 'K' : '°C',
     margin_unit: marginUnit(requirement),
     uncertainty: null,
+    value_uncertainty: null,
+    time_uncertainty_s: null,
     position_m: 'point' in requirement.of ? judgement.position : null,
     spans: spansOf(requirement, tally, reached),
   };

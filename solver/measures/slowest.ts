@@ -10,6 +10,8 @@
  * refined as extremes are (see peak.ts). A stage heats where the mean temperature of the part, weighted with heat capacity,
  * rises by more than 1 % of the largest change: an insulated rest, in which heat only evens out, does not.
  */
+import { volumeFrom } from '../grid';
+import { curveAt } from '../materials';
 import type { LaidCycle, Project, Slowest } from '../model';
 import type { FieldPoints } from '../stepping';
 import { peakBeside } from './peak';
@@ -114,7 +116,7 @@ export class SlowestFinder {
     const largest = change.reduce((most, by) => Math.max(most, Math.abs(by)), 0);
     const least = Math.max(SMALLEST_CHANGE_K, SMALLEST_SHARE * largest);
     const closed = change.map((by, i) => (Math.abs(by) < least ? NaN : lastOpen(pieces, i, end[i], OPEN * Math.abs(by))));
-    return { slowest: this.latest(closed), heats: this.meanOf(change) > HEATING_SHARE * largest };
+    return { slowest: this.latest(closed), heats: this.meanOf(change, start) > HEATING_SHARE * largest };
   }
 
   /** The place of the latest time, the one nearest to the start face where several share it; NaN marks a point left out. */
@@ -136,15 +138,17 @@ export class SlowestFinder {
     return { position_m: peak.position, layer: this.project.part.layers[layer].id, stage: stage.id, time_s: peak.value };
   }
 
-  /** Mean over the depth, weighted with the heat capacity of the layers. */
-  private meanOf(change: Float64Array): number {
+  /** Mean over the volume, weighted with the heat capacity that the layers have at the start of the stage. */
+  private meanOf(change: Float64Array, start: Float64Array): number {
     const { position, layerStart } = this.points;
+    const { part, materials } = this.project;
     let [sum, weights] = [0, 0];
-    this.project.part.layers.forEach((layer, index) => {
-      const material = this.project.materials.find(({ id }) => id === layer.material);
-      const capacity = material === undefined ? 1 : material.density * material.heatCapacity;
+    part.layers.forEach((layer, index) => {
+      const material = materials.find(({ id }) => id === layer.material);
       for (let i = layerStart[index] + 1; i < layerStart[index + 1]; i++) {
-        const weight = capacity * (position[i] - position[i - 1]);
+        const at = (start[i] + start[i - 1]) / 2;
+        const capacity = material === undefined ? 1 : curveAt(material.density, at) * curveAt(material.heatCapacity, at);
+        const weight = capacity * volumeFrom(part, position[i - 1], position[i] - position[i - 1]);
         sum += (weight * (change[i] + change[i - 1])) / 2;
         weights += weight;
       }

@@ -1,9 +1,12 @@
 /** Checks across records: references, unique ids, places that exist, stages that end. */
-import { FACES, type FaceId, type Part } from './part';
+import type { Exposure } from './exposure';
+import { ABSOLUTE_ZERO_C } from './fields';
+import { FACES, isSolid, type Part } from './part';
 import type { Project } from './project';
 import type { Path, Problem } from './problems';
 import type { Place } from './probe';
-import { layCycle, schedulesOf } from './timing';
+import { courseAt, layCycle, stageSchedules, type LaidStage } from './timing';
+import type { Stage } from './cycle';
 
 /** Everything that a single field cannot know; an empty list means that the plan can be run. */
 export function crossCheck(project: Project): Problem[] {
@@ -30,8 +33,9 @@ export function crossCheck(project: Project): Problem[] {
   project.part.layers.forEach((layer, index) =>
     refer(materials, layer.material, ['part', 'layers', index, 'material'], 'material'),
   );
+  checkPart(project, say);
   checkInitial(project, layers, say, refer);
-  checkCycle(project, say);
+  checkCycle(project, layers, say, refer);
   project.probes.forEach((probe, index) => checkPlace(probe.at, project.part, layers, ['probes', index, 'at'], say, refer));
   project.requirements.forEach((requirement, index) => {
     const path = ['requirements', index];
@@ -51,6 +55,12 @@ type Refer = (known: Set<string>, id: string, path: Path, what: string) => void;
 
 function checkInitial(project: Project, layers: Set<string>, say: Say, refer: Refer): void {
   const { initial } = project;
+  if ('steady' in initial) {
+    const held = FACES.some((face) => !['insulated', 'flux'].includes(initial.steady[face].kind));
+    if (!held) say(['initial', 'steady'], 'has no steady state: one face must meet a temperature, a film or radiation');
+    if (isSolid(project.part) && initial.steady.start.kind !== 'insulated') say(['initial', 'steady', 'start'], SOLID);
+    checkSteady(initial.steady, say);
+  }
   if (!('layers' in initial)) return;
   const given = new Set<string>();
   initial.layers.forEach((entry, index) => {
@@ -63,38 +73,104 @@ function checkInitial(project: Project, layers: Set<string>, say: Say, refer: Re
   });
 }
 
-function checkCycle(project: Project, say: Say): void {
-  const before = { start: new Set<string>(), end: new Set<string>() } satisfies Record<FaceId, Set<string>>;
+function checkSteady(exposures: Stage['exposures'], say: Say): void {
+  const path = ['initial', 'steady'];
+  let layable = true;
+  for (const { path: inner, schedule } of stageSchedules({ exposures })) {
+    if (typeof schedule !== 'object' || !('segments' in schedule) || schedule.start !== undefined) continue;
+    say([...path, ...inner.slice(1), 'start'], 'is missing: nothing comes before a steady state that it could carry on from');
+    layable = false;
+  }
+  for (const face of FACES) checkCoefficient(exposures[face], [...path, face], say);
+  if (layable) checkExpressions(exposures, { start: 0, end: 0 }, path, say);
+}
+
+const SOLID = 'must be left out: a solid cylinder or sphere has no start face';
+
+function checkPart({ part, materials }: Project, say: Say): void {
+  if (part.kind === 'wall' && part.innerRadius !== 0)
+    say(['part', 'innerRadius'], 'must be 0 for a wall: only round parts have a bore');
+  materials.forEach((material, index) => {
+    (material.latent ?? []).forEach(({ from, to }, change) => {
+      if (to < from)
+        say(['materials', index, 'latent', change, 'to'], `must be at least ${from} °C, where the change begins, got ${to}`);
+    });
+  });
+}
+
+function checkCycle(project: Project, layers: Set<string>, say: Say, refer: Refer): void {
+  const before = new Set<string>();
   let runnable = true;
   project.cycle.stages.forEach((stage, index) => {
     const path = ['cycle', 'stages', index];
     let scheduled = (stage.setPoint?.segments.length ?? 0) > 0;
-    for (const face of FACES) {
-      for (const { quantity, schedule } of schedulesOf(stage.exposures[face])) {
-        if (typeof schedule === 'object' && 'segments' in schedule) {
-          scheduled ||= schedule.segments.length > 0;
-          if (schedule.start === undefined && !before[face].has(quantity)) {
-            say(
-              [...path, 'exposures', face, quantity, 'start'],
-              'is missing: nothing was reached in an earlier stage that it could carry on from',
-            );
-            runnable = false;
-          }
+    if (isSolid(project.part) && stage.exposures.start.kind !== 'insulated') say([...path, 'exposures', 'start'], SOLID);
+    const heated = new Set<string>();
+    (stage.sources ?? []).forEach(({ layer }, source) => {
+      refer(layers, layer, [...path, 'sources', source, 'layer'], 'layer');
+      if (heated.has(layer))
+        say([...path, 'sources', source, 'layer'], 'must be another layer: this one has a source in this stage already');
+      heated.add(layer);
+    });
+    for (const { owner, path: inner, quantity, schedule } of stageSchedules(stage)) {
+      const what = `${owner} ${quantity}`;
+      if (typeof schedule === 'object' && 'segments' in schedule) {
+        scheduled ||= schedule.segments.length > 0;
+        if (schedule.start === undefined && !before.has(what)) {
+          say([...path, ...inner, 'start'], 'is missing: nothing was reached in an earlier stage that it could carry on from');
+          runnable = false;
         }
-        before[face].add(quantity);
       }
+      before.add(what);
     }
+    for (const face of FACES) checkCoefficient(stage.exposures[face], [...path, 'exposures', face], say);
     if ('whenScheduleDone' in stage.end && !scheduled) {
       say([...path, 'end'], 'waits for a schedule, but no schedule of this stage has segments; give it a time instead');
       runnable = false;
     }
   });
-  if (!runnable) return;
-  const laid = layCycle(project);
-  laid.stages.forEach((stage, index) => {
+  if (runnable) checkLaid(project, say);
+}
+
+function checkCoefficient(exposure: Exposure, path: Path, say: Say): void {
+  if (exposure.kind !== 'film' || typeof exposure.coefficient !== 'object' || !('correlation' in exposure.coefficient)) return;
+  const { correlation, velocity } = exposure.coefficient;
+  const forced = correlation.startsWith('forced');
+  if (forced && velocity === undefined)
+    say([...path, 'coefficient', 'velocity'], 'is missing: a forced correlation needs a velocity in m/s');
+  if (!forced && velocity !== undefined)
+    say([...path, 'coefficient', 'velocity'], 'must be left out: natural convection has no velocity of its own');
+}
+
+/** Instants at which expressions of time are tried in every stage. */
+const TRIED = 64;
+
+function checkLaid(project: Project, say: Say): void {
+  layCycle(project).stages.forEach((stage, index) => {
+    const path = ['cycle', 'stages', index];
     if (!(stage.end > stage.start))
-      say(['cycle', 'stages', index, 'end'], 'must come later than the start of the stage: its schedules take no time');
+      say([...path, 'end'], 'must come later than the start of the stage: its schedules take no time');
+    checkExpressions(project.cycle.stages[index].exposures, stage, [...path, 'exposures'], say);
   });
+}
+
+/** Whether every expression of time in exposures gives numbers that can be between two times; `path` leads to the exposures. */
+function checkExpressions(
+  exposures: Stage['exposures'],
+  { start, end }: Pick<LaidStage, 'start' | 'end'>,
+  path: Path,
+  say: Say,
+): void {
+  for (const { path: inner, quantity, schedule } of stageSchedules({ exposures })) {
+    if (typeof schedule !== 'object' || !('expression' in schedule)) continue;
+    for (let i = 0; i <= TRIED; i++) {
+      const time = start + (i / TRIED) * (end - start);
+      const value = courseAt({ expression: schedule.expression, stageStart: start }, time);
+      if (Number.isFinite(value) && (quantity === 'flux' || value > ABSOLUTE_ZERO_C)) continue;
+      say([...path, ...inner.slice(1), 'expression'], `gives ${value} at t = ${time - start} s of the stage`);
+      break;
+    }
+  }
 }
 
 /** Thickness of the whole part, m. */

@@ -19,6 +19,7 @@ export function newProject(): Project {
     ],
     part: {
       kind: 'wall',
+      innerRadius: 0,
       layers: [{ id: 'l1', name: 'Layer 1', material: 'm1', thickness: 0.05, contact: 0 }],
       faces: { start: { name: 'Start face' }, end: { name: 'End face' } },
     },

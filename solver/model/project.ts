@@ -2,13 +2,14 @@
 import { z } from 'zod';
 import { cycleSchema } from './cycle';
 import { materialSchema } from './material';
-import { initialSchema, partSchema } from './part';
+import { initialSchema } from './initial';
+import { partSchema } from './part';
 import { probeSchema } from './probe';
 import { requirementSchema } from './requirement';
 import { outputSchema, settingsSchema } from './settings';
 
 export const FORMAT = 'soakwright-plan';
-export const VERSION = 1;
+export const VERSION = 2;
 
 export const projectSchema = z
   .strictObject({

@@ -20,6 +20,9 @@ const temperature = quantity('°C');
 const text = z.string();
 const count = z.int().nonnegative();
 
+const uncertainty = (of: string) =>
+  z.number().nonnegative().nullable().describe(`half the width of the 95 % interval of the ${of}`);
+
 const answerSchema = z
   .strictObject({
     requirement: text.describe('id of the requirement'),
@@ -37,7 +40,9 @@ const answerSchema = z
     margin: z.number().nullable().describe('positive is good, in `margin_unit`'),
     unit: z.enum(['°C', 'K', 's']),
     margin_unit: z.enum(['K', 's']),
-    uncertainty: z.null().describe('half the width of the 95 % interval of the margin; not known yet'),
+    uncertainty: uncertainty('margin, from grid and step, in `margin_unit`; null where it is not known'),
+    value_uncertainty: uncertainty('value, in `unit`'),
+    time_uncertainty_s: uncertainty('time_s, where it is the time of a crossing'),
     position_m: depth.nullable(),
   })
   .describe('verdict of a requirement');
@@ -69,6 +74,7 @@ const outcomeReasons = [
   'cancelled',
   'step-above-limit',
   'step-too-small',
+  'not-converged',
   'not-finite',
   'too-many-steps',
   'invalid-project',
@@ -115,11 +121,12 @@ export const reportSchema = z
       )
       .describe('histories of the probes'),
     energy: z.strictObject({
-      basis: z.literal('J/m²').describe('what the heats are per'),
+      basis: z.enum(['J/m²', 'J/m', 'J']).describe('what the heats are per'),
       in_J: z.number().describe('heat through both faces, positive into the part'),
       byFace_J: z.strictObject({ start: z.number(), end: z.number() }),
+      generated_J: z.number().describe('heat given off inside, by sources and reactions'),
       stored_J: z.number(),
-      closure: z.number().describe('|stored − in| over the sum of what was exchanged'),
+      closure: z.number().describe('|stored − in − generated| over the sum of what was exchanged'),
       lag_K: quantity('K', {}, 'largest distance between carried heat and the temperatures'),
     }),
     stability: z
@@ -139,6 +146,16 @@ export const reportSchema = z
       kernels: z.enum(['typescript', 'wasm']),
       wall_s: quantity('s', {}, 'time of the solve on the clock'),
     }),
+    refinement: z
+      .array(
+        z.strictObject({
+          of: z.enum(['accuracy', 'grid', 'step']),
+          runs: count.describe('runs compared, this one among them'),
+          order: z.number().nullable().describe('middle one of the orders of convergence observed'),
+        }),
+      )
+      .nullable()
+      .describe('what the uncertainty of the answers was drawn from; null where it is not known'),
     warnings: z.array(z.strictObject({ code: text, message: text, place: text.nullable().describe('place in the plan') })),
   })
   .describe('Soakwright report of one run');
@@ -146,7 +163,7 @@ export type Report = z.infer<typeof reportSchema>;
 
 /** The report of a run of a project. */
 export function buildReport(project: Project, result: RunResult): Report {
-  const { outcome, first, stages, energy, stability, solver, warnings } = result;
+  const { outcome, first, stages, energy, stability, solver, refinement, warnings } = result;
   let edge = 0;
   return {
     format: REPORT_FORMAT,
@@ -166,6 +183,7 @@ export function buildReport(project: Project, result: RunResult): Report {
     energy,
     stability,
     solver,
+    refinement,
     warnings,
   };
 }

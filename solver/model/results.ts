@@ -39,8 +39,15 @@ export interface Answer {
   /** Unit of value and limit. */
   unit: '°C' | 'K' | 's';
   margin_unit: 'K' | 's';
-  /** Half the width of the 95 % interval of the margin; null until numerical uncertainty is known. */
-  uncertainty: null;
+  /**
+   * Numerical uncertainty, from grid and step: half the width of the 95 % interval of the margin, in `margin_unit`. Null
+   * while it is not known yet, and where finer runs disagree on more than a number (a warning then says so).
+   */
+  uncertainty: number | null;
+  /** The same of `value`, in `unit`. */
+  value_uncertainty: number | null;
+  /** The same of `time_s`, where it is the time of a crossing; null for times of extremes and of stage ends. */
+  time_uncertainty_s: number | null;
   /** Depth of the point that decides, for the coldest or hottest point; null otherwise. */
   position_m: number | null;
   spans: Span[];
@@ -111,10 +118,13 @@ export interface StageTimes {
 }
 
 export interface Energy {
-  basis: 'J/m²';
+  /** What heats are per: m² of a wall, m of a cylinder, or a whole sphere. */
+  basis: 'J/m²' | 'J/m' | 'J';
   /** Heat through both faces, positive into the part. */
   in_J: number;
   byFace_J: Record<FaceId, number>;
+  /** Heat given off inside, by sources and reactions. */
+  generated_J: number;
   stored_J: number;
   /** |ΔE − ΣQ| / Σ|Q|; 0 if nothing is exchanged. */
   closure: number;
@@ -132,7 +142,14 @@ export interface Stability {
 
 /** Every way a run can end. `finished` alone is a success; see OUTCOMES in stepping for causes and remedies. */
 export type OutcomeReason =
-  'finished' | 'cancelled' | 'step-above-limit' | 'step-too-small' | 'not-finite' | 'too-many-steps' | 'invalid-project';
+  | 'finished'
+  | 'cancelled'
+  | 'step-above-limit'
+  | 'step-too-small'
+  | 'not-converged'
+  | 'not-finite'
+  | 'too-many-steps'
+  | 'invalid-project';
 
 export interface Outcome {
   reason: OutcomeReason;
@@ -157,6 +174,15 @@ export interface SolverFigures {
   wall_s: number;
 }
 
+/** What the uncertainty of the answers was drawn from: runs on finer and coarser grids, steps or accuracies; one entry each. */
+export type Refinement = {
+  of: 'accuracy' | 'grid' | 'step';
+  /** Runs compared, this one among them. */
+  runs: number;
+  /** Middle one of the orders of convergence observed; null where none was. */
+  order: number | null;
+}[];
+
 export interface Warning {
   code: string;
   message: string;
@@ -176,5 +202,7 @@ export interface RunResult {
   energy: Energy;
   stability: Stability | null;
   solver: SolverFigures;
+  /** Null until the answers carry their uncertainty, and where it cannot be known. */
+  refinement: Refinement | null;
   warnings: Warning[];
 }

@@ -1,2 +1,3 @@
-/** Doors of planning: the solve of one plan. */
+/** Doors of planning: the solve of one plan, and what its answers owe to grid and step. */
 export { solve, startSolve, type Progress, type SolveOptions, type Solving } from './solve';
+export { startRefining, type Refining } from './uncertainty';

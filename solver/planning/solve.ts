@@ -93,6 +93,7 @@ function resultOf(project: Project, run: Run, measures: Measures, outcome: Outco
     energy: run.energy(),
     stability: run.stability,
     solver: { scheme, method, steps, rejected, volumes, factorisations, kernels: 'typescript', wall_s },
+    refinement: null,
     warnings: [...run.warnings(), ...planWarnings(project, run.cycle), ...runWarnings(outcome, measured.answers)],
   };
 }

@@ -1,6 +1,7 @@
 /** What a planner should know besides the answers: things that are allowed, and most likely not meant. */
 import {
   FACES,
+  layState,
   placeOf,
   type Answer,
   type LaidCycle,
@@ -10,6 +11,7 @@ import {
   type Requirement,
   type Warning,
 } from '../model';
+import { instantOf, timesOf } from '../materials';
 
 /** Warnings that the plan itself gives, before a step is taken. */
 export function planWarnings(project: Project, cycle: LaidCycle): Warning[] {
@@ -67,7 +69,7 @@ function windowWarnings({ name, must, counts }: Requirement, index: number, cycl
 }
 
 /**
- * A limit that no point can come to. With constant properties, no sources and no imposed flux, temperatures stay between the
+ * A limit that no point can come to. With no source, no reaction and no imposed flux, temperatures stay between the
  * lowest and the highest of the initial ones and those at the faces (the maximum principle of heat conduction).
  */
 function reachWarnings({ name, of, must }: Requirement, index: number, project: Project, cycle: LaidCycle): Warning[] {
@@ -85,28 +87,39 @@ function reachWarnings({ name, of, must }: Requirement, index: number, project: 
   return [];
 }
 
-/** Lowest and highest temperature that any point can have, °C; without bounds where a flux is imposed. */
-function span({ initial }: Project, cycle: LaidCycle): [number, number] {
-  const met = 'temperature' in initial ? [initial.temperature] : initial.layers.map(({ temperature }) => temperature);
-  for (const { exposures } of cycle.stages) for (const face of FACES) met.push(...temperaturesOf(exposures[face]));
+/** Lowest and highest temperature that any point can have, °C; without bounds where a flux is imposed or heat is given off. */
+function span(project: Project, cycle: LaidCycle): [number, number] {
+  const met = initialTemperatures(project);
+  for (const { exposures, sources, start, end } of cycle.stages) {
+    for (const face of FACES) met.push(...temperaturesAt(exposures[face], start, end));
+    // What an expression of a source comes to is known only while it runs.
+    const powers = sources.flatMap(({ power }) => ('expression' in power ? [1, -1] : power.value));
+    met.push(...powers.filter((power) => power !== 0).map((power) => power * Infinity));
+  }
+  for (const { reaction } of project.materials)
+    if (reaction !== undefined && reaction.heat !== 0) met.push(reaction.heat * Infinity);
   return [Math.min(...met), Math.max(...met)];
 }
 
-function temperaturesOf(exposure: LaidExposure): number[] {
-  switch (exposure.kind) {
-    case 'insulated':
-      return [];
-    case 'temperature':
-      return exposure.temperature.value;
-    case 'film':
-      return exposure.surroundings.value;
-    case 'flux':
-      return [
-        ...(exposure.flux.value.some((flux) => flux > 0) ? [Infinity] : []),
-        ...(exposure.flux.value.some((flux) => flux < 0) ? [-Infinity] : []),
-      ];
-  }
+/** Temperatures between which the start lies. */
+function initialTemperatures({ initial, part, cycle }: Project): number[] {
+  if ('temperature' in initial) return [initial.temperature];
+  if ('layers' in initial) return initial.layers.map(({ temperature }) => temperature);
+  if ('profile' in initial) return initial.profile.map(([, temperature]) => temperature);
+  const { exposures, start, end } = layState({ part, cycle }, { exposures: initial.steady });
+  return FACES.flatMap((face) => temperaturesAt(exposures[face], start, end));
 }
+
+/** Temperatures that a face meets between two times; none that bounds where a flux is imposed. */
+const temperaturesAt = (exposure: LaidExposure, start: number, end: number): number[] =>
+  timesOf(exposure, start, end).flatMap((time) =>
+    (['before', 'after'] as const).flatMap((side) => {
+      const { outside, flux } = instantOf(exposure, time, side);
+      if (exposure.kind !== 'flux') return outside;
+      const imposed = flux(0);
+      return imposed === 0 ? [] : [imposed * Infinity];
+    }),
+  );
 
 const degrees = (value: number): string => `${Number(value.toPrecision(6))} °C`;
 

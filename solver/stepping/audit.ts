@@ -15,7 +15,7 @@ export class Audit {
   constructor(system: HeatSystem, state: HeatState) {
     this.system = system;
     this.state = state;
-    this.storedAtStart = Float64Array.from(state.stored);
+    this.storedAtStart = Float64Array.from(this.heatStored());
     this.counted = new Float64Array(system.heats);
   }
 
@@ -32,12 +32,16 @@ export class Audit {
     if (!this.system.linear) this.largestLag = this.lagUpTo(time);
   }
 
+  private heatStored(): Float64Array {
+    return this.state.stored.subarray(0, this.system.heatRows);
+  }
+
   /** The largest lag noted so far or found at `time`. Looking changes nothing: how often a run was asked leaves no trace in it. */
   private lagUpTo(time: number): number {
     const { system, state } = this;
     let largest = this.largestLag;
     system.evaluate(state.unknowns, time);
-    for (let row = 0; row < system.size; row++) {
+    for (let row = 0; row < system.heatRows; row++) {
       const lag = Math.abs((state.stored[row] - system.storage[row]) / system.rowCapacity[row]);
       if (lag > largest) largest = lag;
     }
@@ -51,7 +55,7 @@ export class Audit {
    */
   figures(time: number): { stored: number; through: Float64Array; closure: number; lag: number } {
     const { state, exchanged, storedAtStart } = this;
-    const changes = state.stored.map((value, row) => value - storedAtStart[row]);
+    const changes = this.heatStored().map((value, row) => value - storedAtStart[row]);
     const stored = sumOf(changes);
     const moved = sumOf(changes.map(Math.abs));
     const closure = exchanged > 0 ? Math.abs(stored - sumOf(state.through)) / (exchanged + 1e-6 * moved) : 0;

@@ -156,9 +156,9 @@ export class Automatic implements Scheme {
         system.evaluate(this.point, stageTime);
       }
       this.solveStage(i, stageTime, length);
-      if (i === LAST - 1) this.changeBefore = system.largestChange(this.stage).kelvin;
+      if (i === LAST - 1) this.changeBefore = system.largestChange(this.point, this.stage).kelvin;
     }
-    const { kelvin, row } = system.largestChange(this.stage);
+    const { kelvin, row } = system.largestChange(this.point, this.stage);
     const error = Math.max(kelvin, STAGE_BEFORE_PART * this.changeBefore) / this.localError;
     if (error <= 1) {
       this.controller.accept(length, error);

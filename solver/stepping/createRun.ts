@@ -1,6 +1,8 @@
 import { WallSystem } from '../heat';
+import { largestEigenvalue } from '../linear';
 import type { LaidCycle, Outcome, Project, Stability, Warning, Energy } from '../model';
 import type { FieldPoints, Run, StepObserver } from './contract';
+import { tooManySteps, wordFailure } from './endings';
 import { makeScheme, type SchemeSettings } from './makeScheme';
 import { prepare, type Prepared } from './prepare';
 import { MOST_STEPS, refusalOf } from './refusal';
@@ -10,6 +12,9 @@ import { wallLimit, type ExplicitLimit } from './stabilityLimit';
 import { StepView } from './stepView';
 import { depth, layerNamed, seconds } from './words';
 import { warningsOf } from './warnings';
+
+/** What heats are per: m² of a wall, m of a cylinder, or the whole sphere. */
+const BASES = { wall: 'J/m²', cylinder: 'J/m', sphere: 'J' } as const;
 
 /** Steps of the automatic scheme, rejected ones counted: it takes tens to thousands. */
 const MOST_AUTOMATIC_STEPS = 500_000;
@@ -47,7 +52,7 @@ class WallRun implements Run {
     this.start = new Float64Array(this.system.points);
     this.system.report(state.unknowns, 0, this.start);
     this.scheme = makeScheme(settings, this.system, state, cycle.end);
-    const view = new StepView(this.system, state, this.scheme);
+    const view = new StepView(this.system, state, this.scheme, this.system.faceArea);
     const shown = {
       interval: () => view.startFrom(this.loop.time),
       step: (from: number, to: number, { stage }: { stage: number }) => {
@@ -74,8 +79,9 @@ class WallRun implements Run {
   private outcomeOf(ending: Ending | null): Outcome | null {
     if (ending === null) return null;
     const { time } = this.loop;
-    const message = ending.reason === 'finished' ? null : this.wordEnding(ending);
-    return { reason: ending.reason, reached_s: time, stage: this.cycle.stages[this.stageIndex()].id, message };
+    const stage = this.cycle.stages[this.stageIndex()].id;
+    const words = ending.reason === 'finished' ? { message: null } : this.endingOf(ending);
+    return { reason: ending.reason, reached_s: time, stage, ...words };
   }
 
   /** Index of the stage that the run is in, or ended in. */
@@ -85,34 +91,22 @@ class WallRun implements Run {
     return next < 0 ? stages.length - 1 : next;
   }
 
-  private wordEnding(ending: Exclude<Ending, { reason: 'finished' }>): string {
-    const when = `at ${seconds(this.loop.time)}, in stage ${this.cycle.stages[this.stageIndex()].name}`;
-    if (ending.reason === 'too-many-steps') {
-      return `Stopped ${when}, after ${this.loop.steps + this.loop.rejected} steps. Ask for a coarser accuracy.`;
-    }
-    const where = this.placeOfRow(ending.row);
-    if (ending.reason === 'step-too-small') {
-      return (
-        `Stopped ${when}: no step keeps the accuracy at ${where}. It may lie in the rounding of the numbers; ask for a coarser ` +
-        `accuracy, or check the values there.`
-      );
-    }
-    return `Stopped ${when}: the temperature at ${where} is not a finite number. Check the values there and of the exposures.`;
-  }
-
-  private placeOfRow(row: number): string {
-    const { points, prepared, system } = this;
-    const point = system.pointUnknown.indexOf(row);
-    const layer = points.layerStart.findIndex((first) => first > point) - 1;
-    return `${layerNamed(prepared.layers[layer].name)}, ${depth(points.position[point])}`;
+  private endingOf(ending: Exclude<Ending, { reason: 'finished' }>): Pick<Outcome, 'message' | 'remedy'> {
+    const { loop, prepared, system } = this;
+    const when = `at ${seconds(loop.time)}, in stage ${this.cycle.stages[this.stageIndex()].name}`;
+    if (!('row' in ending)) return { message: tooManySteps(when, loop.steps + loop.rejected) };
+    const place = system.placeOf(ending.row);
+    const where = `${layerNamed(prepared.layers[place.layer].name)}, ${depth(place.depth)}`;
+    return wordFailure(ending.reason, when, where, () => 2 / largestEigenvalue(system.evenOutRates()));
   }
 
   energy(): Energy {
     const { stored, through, closure, lag } = this.loop.audit.figures(this.loop.time);
     return {
-      basis: 'J/m²',
+      basis: BASES[this.prepared.grid.shape.kind],
       in_J: through[0] + through[1],
       byFace_J: { start: through[0], end: through[1] },
+      generated_J: through.slice(2).reduce((sum, heat) => sum + heat, 0),
       stored_J: stored,
       closure,
       lag_K: lag,

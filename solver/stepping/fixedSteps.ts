@@ -57,7 +57,7 @@ export class StraightStep {
    */
   finish(change: Float64Array, inflow: Float64Array, through: Float64Array, time: number): Attempt {
     const { system, state } = this;
-    const largest = system.largestChange(change);
+    const largest = system.largestChange(state.unknowns, change);
     if (!(largest.kelvin < Infinity)) return { kind: 'failed', reason: 'not-finite', row: largest.row };
     for (let row = 0; row < system.size; row++) {
       state.unknowns[row] += change[row];

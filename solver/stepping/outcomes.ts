@@ -23,8 +23,14 @@ export const OUTCOMES: Readonly<Record<OutcomeReason, OutcomeEntry>> = {
   },
   'step-above-limit': {
     success: false,
-    meaning: 'The explicit scheme was not run: its step is above the stability limit, and the result would grow without bound.',
-    causes: ['a thin layer or a fine grid', 'a good conductor beside a poor one', 'a strong film on a thin volume'],
+    meaning:
+      'The explicit scheme was not run, or was stopped: its step is above the stability limit, and the result would grow without bound.',
+    causes: [
+      'a thin layer or a fine grid',
+      'a good conductor beside a poor one',
+      'a strong film on a thin volume',
+      'properties that changed further than foreseen while it ran',
+    ],
     whatToDo: 'Take a step below the limit, fewer nodes in the layer that sets it, or another scheme.',
   },
   'step-too-small': {
@@ -32,6 +38,16 @@ export const OUTCOMES: Readonly<Record<OutcomeReason, OutcomeEntry>> = {
     meaning: 'The automatic scheme could not keep its accuracy with any step that still moves time.',
     causes: ['an accuracy near the rounding of the numbers', 'values in the plan that differ by very many orders of magnitude'],
     whatToDo: 'Ask for a coarser accuracy, and check the values of the layer named.',
+  },
+  'not-converged': {
+    success: false,
+    meaning: 'The equations of an implicit step could not be solved: its step is too long for how steeply something changes.',
+    causes: [
+      'latent heat at a point, or a sharp peak of heat capacity, crossed in one step',
+      'a steep curve of the film coefficient',
+      'a fast reaction',
+    ],
+    whatToDo: 'Take a shorter step, or the automatic scheme.',
   },
   'not-finite': {
     success: false,

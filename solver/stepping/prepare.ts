@@ -5,12 +5,14 @@ import {
   temperatureRange,
   wallLayers,
   type FieldPoints,
+  type Shape,
   type WallGrid,
   type WallLayer,
 } from '../grid';
 import { layCycle, type LaidCycle, type Project } from '../model';
 import { intervalsOf, type CycleInterval } from './intervals';
 import type { SchemeSettings } from './makeScheme';
+import { steadyStart } from './steady';
 import { layerNamed } from './words';
 
 /** A plan made ready to run: everything that does not change while it runs. */
@@ -35,24 +37,42 @@ const MOST_NODES = 200_000;
 /** Makes a checked plan ready. Throws RangeError where crossCheck would have found a problem. */
 export function prepare(project: Project): Prepared {
   const cycle = layCycle(project);
-  const layers = wallLayers(project);
+  const start = startOf(project);
+  const layers = start.layers;
   const range = temperatureRange(layers, cycle);
   const wantedAccuracy = project.settings.accuracy;
   const accuracy = Math.max(wantedAccuracy, FINEST_ACCURACY * (range.highest - range.lowest));
-  const wanted = gridOf({ ...project.settings, accuracy }, layers, cycle, range);
-  const unusable = whyUnusable(layers, wanted);
-  const standIn = (): WallGrid => equalGrid('nodes', wanted.thickness, new Array<number>(layers.length).fill(1));
+  const { kind, innerRadius } = project.part;
+  const shape: Shape = { kind, innerRadius };
+  const wanted = gridOf({ ...project.settings, accuracy }, layers, cycle, range, shape);
+  const unusable = start.lacking ?? whyUnusable(layers, wanted);
+  const standIn = (): WallGrid => equalGrid('nodes', wanted.thickness, new Array<number>(layers.length).fill(1), shape);
   const grid = unusable === null ? wanted : standIn();
   return {
     cycle,
     intervals: intervalsOf(cycle),
-    layers,
+    layers: unusable === null ? settled(project, layers, grid) : layers,
     grid,
     points: fieldPoints(grid),
     settings: schemeSettings(project, accuracy),
     wantedAccuracy,
     unusable,
   };
+}
+
+/** The layers as they start; a steady state at the start comes from a grid of its own, until there is the plan's. */
+function startOf(project: Project): { layers: WallLayer[]; lacking: string | null } {
+  if (!('steady' in project.initial)) return { layers: wallLayers(project), lacking: null };
+  const start = steadyStart(project, project.initial.steady);
+  if (start.kind === 'start') return { layers: wallLayers(project, start.profiles), lacking: null };
+  return { layers: wallLayers({ ...project, initial: { temperature: 20 } }), lacking: start.message };
+}
+
+/** The layers with a steady state at the start as the plan's own grid has it: under the same exposures nothing then moves. */
+function settled(project: Project, layers: WallLayer[], grid: WallGrid): WallLayer[] {
+  if (!('steady' in project.initial)) return layers;
+  const start = steadyStart(project, project.initial.steady, grid);
+  return start.kind === 'start' ? wallLayers(project, start.profiles) : layers;
 }
 
 function schemeSettings({ settings }: Project, accuracy: number): SchemeSettings {

@@ -5,12 +5,10 @@
 import type { HeatSystem } from '../heat';
 import { Audit } from './audit';
 import type { CycleInterval } from './intervals';
-import type { HeatState, Scheme } from './scheme';
+import type { FailedStep, HeatState, Scheme } from './scheme';
 
 export type Ending =
-  | { readonly reason: 'finished' }
-  | { readonly reason: 'too-many-steps' }
-  | { readonly reason: 'step-too-small' | 'not-finite'; readonly row: number };
+  { readonly reason: 'finished' } | { readonly reason: 'too-many-steps' } | { readonly reason: FailedStep; readonly row: number };
 
 /** Told of every accepted step, and before it where the state may have jumped at the start of an interval. */
 export interface LoopObserver {

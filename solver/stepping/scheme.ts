@@ -34,7 +34,10 @@ export function startState(system: HeatSystem): HeatState {
 export type Attempt =
   | { readonly kind: 'accepted' }
   | { readonly kind: 'rejected' }
-  | { readonly kind: 'failed'; readonly reason: 'not-finite' | 'step-too-small'; readonly row: number };
+  | { readonly kind: 'failed'; readonly reason: FailedStep; readonly row: number };
+
+/** Why a step cannot be taken. */
+export type FailedStep = 'not-finite' | 'step-too-small' | 'not-converged' | 'step-above-limit';
 
 export const ACCEPTED: Attempt = { kind: 'accepted' };
 export const REJECTED: Attempt = { kind: 'rejected' };

@@ -5,10 +5,11 @@
  * (C capacities, K conductances). The usual hand rule, Fo (1 + Bi) ≤ 1/2, is the smaller limit without overshoot,
  * the smallest capacity over conductance of any volume.
  */
-import { equalGrid, type WallGrid, type WallLayer } from '../grid';
+import { equalGrid, temperatureRange, type TemperatureRange, type WallGrid, type WallLayer } from '../grid';
 import { wallVolumes, type Volumes } from '../heat';
 import { eigenvectorAt, largestEigenvalue } from '../linear';
-import type { LaidCycle, LaidStage } from '../model';
+import { largestConductance } from '../materials';
+import { FACES, type LaidCycle, type LaidStage } from '../model';
 
 export interface ExplicitLimit {
   /** 2/λmax rounded down by 0.1 %, s. */
@@ -44,24 +45,26 @@ export function limitOf(volumes: Volumes): ExplicitLimit | null {
   };
 }
 
-/** The smallest limits over all stages of a cycle, each with the largest film coefficients that occur in it. */
+/** The smallest limits over all stages of a cycle, each with the largest conductances at faces and contacts that occur in it. */
 export function wallLimit(layers: readonly WallLayer[], grid: WallGrid, cycle: LaidCycle): ExplicitLimit | null {
-  const limits = distinctExposures(cycle)
-    .map((exposures) => limitOf(wallVolumes(layers, grid, exposures)))
+  const range = temperatureRange(layers, cycle);
+  const limits = distinctStages(cycle, range)
+    .map((stage) => limitOf(wallVolumes(layers, grid, stage, range)))
     .filter((limit) => limit !== null);
   if (limits.length === 0) return null;
   const worst = limits.reduce((lowest, limit) => (limit.limit < lowest.limit ? limit : lowest));
   return { ...worst, noOvershoot: Math.min(...limits.map((limit) => limit.noOvershoot)) };
 }
 
-/** Exposures of the stages, but only one of those that conduct alike. */
-function distinctExposures(cycle: LaidCycle): LaidStage['exposures'][] {
-  const seen = new Map<string, LaidStage['exposures']>();
-  for (const { exposures } of cycle.stages) {
-    const key = [exposures.start, exposures.end]
-      .map((exposure) => (exposure.kind === 'film' ? Math.max(...exposure.coefficient.value) : exposure.kind))
-      .join();
-    seen.set(key, exposures);
+/** The stages, but only one of those that conduct alike. */
+function distinctStages(cycle: LaidCycle, range: TemperatureRange): LaidStage[] {
+  const seen = new Map<string, LaidStage>();
+  for (const stage of cycle.stages) {
+    const key = FACES.map((face) => {
+      const exposure = stage.exposures[face];
+      return exposure.kind === 'film' ? largestConductance(exposure, stage, range) : exposure.kind;
+    }).join();
+    seen.set(key, stage);
   }
   return [...seen.values()];
 }

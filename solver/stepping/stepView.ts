@@ -13,12 +13,15 @@ export class StepView implements Step {
   private readonly system: HeatSystem;
   private readonly state: HeatState;
   private readonly scheme: Scheme;
+  private readonly faceArea: readonly [number, number];
   /** Unknowns and field at a fraction, where points are not plain unknowns. */
   private readonly unknowns: Float64Array;
   private readonly field: Float64Array;
   private fieldFraction = NaN;
 
-  constructor(system: HeatSystem, state: HeatState, scheme: Scheme) {
+  /** `faceArea`: of the start and the end face, m² per basis. */
+  constructor(system: HeatSystem, state: HeatState, scheme: Scheme, faceArea: readonly [number, number]) {
+    this.faceArea = faceArea;
     this.system = system;
     this.state = state;
     this.scheme = scheme;
@@ -61,7 +64,9 @@ export class StepView implements Step {
   faceFluxAt(face: FaceId, fraction: number): number {
     const heat = face === 'start' ? 0 : 1;
     const byLaw = this.system.rateAt(heat, (row) => this.scheme.unknownAt(row, fraction), this.timeAt(fraction));
-    return byLaw ?? this.scheme.heatRateAt(heat, fraction);
+    const area = this.faceArea[heat];
+    // A centre has no area, and nothing flows through it.
+    return area > 0 ? (byLaw ?? this.scheme.heatRateAt(heat, fraction)) / area : 0;
   }
 
   private timeAt(fraction: number): number {

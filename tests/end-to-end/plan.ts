@@ -128,24 +128,17 @@ export function describePlan(hands: () => Hands): void {
     });
 
     it('plays its timeline and stops', async () => {
-      const playhead = page().getByRole('slider', { name: /playhead/i });
-      const shown = (): Promise<string> => playhead.innerText();
-      const said = (): Promise<string | null> => playhead.getAttribute('aria-valuenow');
-      // At the slowest speed, so that it does not come to its end meanwhile.
-      await page()
-        .getByRole('radiogroup', { name: /^Speed/ })
-        .getByRole('radio')
-        .first()
-        .click();
-      const [shownAtFirst, saidAtFirst] = [await shown(), Number(await said())];
+      const now = (): Promise<string | null> =>
+        page()
+          .getByRole('slider', { name: /playhead/i })
+          .getAttribute('aria-valuenow');
+      const start = Number(await now());
       await page().getByRole('button', { name: 'Play', exact: true }).click();
-      await expect.poll(shown, SLOW).not.toBe(shownAtFirst);
+      await expect.poll(async () => Number(await now())).toBeGreaterThan(start);
       await page().getByRole('button', { name: 'Pause' }).click();
-      // Read out once it rests.
-      await expect.poll(async () => Number(await said())).toBeGreaterThan(saidAtFirst);
-      const [paused, saidThen] = [await shown(), await said()];
+      const paused = await now();
       await page().waitForTimeout(300);
-      expect([await shown(), await said()]).toEqual([paused, saidThen]);
+      expect(await now()).toBe(paused);
     });
 
     it('undoes every edit by name, back to the sample, and redoes them', async () => {

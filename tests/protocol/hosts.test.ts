@@ -122,9 +122,14 @@ describe('a job on a host', () => {
     ['in a worker of the browser', workerLink],
   ];
 
-  it.each(hosts)('%s: answers, then frames, then done, all under its revision', async (_, start) => {
+  it.each(hosts)('%s: answers, then frames, then answers with their uncertainty, then done', async (_, start) => {
     const { events } = await talk(await start());
-    expect(events.map(({ type }) => type).slice(-3)).toEqual(['answers', 'frames', 'done']);
+    const told = events.filter(({ type }) => type !== 'progress');
+    expect(told.map(({ type }) => type).slice(-4)).toEqual(['answers', 'frames', 'answers', 'done']);
+    const [value, , refined] = told.slice(-4) as Extract<ClientEvent, { type: 'answers' }>[];
+    expect(value).toMatchObject({ final: false, refining: true, result: { refinement: null } });
+    expect(refined.final).toBe(true);
+    for (const { margin, uncertainty } of refined.result.answers) if (margin !== null) expect(uncertainty).toBeGreaterThan(0);
     expect(events.every((event) => 'revision' in event && event.revision === 3)).toBe(true);
     expect(events.at(-1)).toMatchObject({ outcomes: [{ reason: 'finished' }] });
   });

@@ -11,6 +11,7 @@ export type RodEnd = { held: number } | { flux: number; formula: 'halfCell' | 'o
 
 export class RodWithSource implements HeatSystem {
   readonly size: number;
+  readonly heatRows: number;
   /** Through the start, through the end, and from the source. */
   readonly heats = 3;
   readonly linear = true;
@@ -32,7 +33,7 @@ export class RodWithSource implements HeatSystem {
   /** `elements` equal elements; `source` at a depth, per length. */
   constructor(elements: number, end: RodEnd, source: (x: number) => number) {
     const size = elements + 1;
-    this.size = size;
+    this.size = this.heatRows = size;
     this.points = size;
     this.spacing = 1 / elements;
     this.end = end;
@@ -107,6 +108,16 @@ export class RodWithSource implements HeatSystem {
     return heat === 1 && 'held' in this.end ? (x[last] - x[last - 1]) / this.spacing : 0;
   }
 
+  evenOutRates() {
+    const rate = 1 / (this.spacing * this.spacing);
+    const held = (row: number): boolean => this.heldRows.includes(row);
+    const diagonal = Float64Array.from({ length: this.size }, (_, row) => (held(row) ? 0 : 2 * rate));
+    const beside = Float64Array.from({ length: this.size - 1 }, (_, row) =>
+      held(row) || held(row + 1) ? 0 : row + 1 === this.size - 1 ? -Math.SQRT2 * rate : -rate,
+    );
+    return { diagonal, beside };
+  }
+
   heldChanges(u: Float64Array, _time: number, _ahead: number, rightHandSide: Float64Array): void {
     for (const row of this.heldRows) rightHandSide[row] = this.heldAt(row) - u[row];
   }
@@ -120,7 +131,7 @@ export class RodWithSource implements HeatSystem {
     }
   }
 
-  largestChange(x: ArrayLike<number>): { kelvin: number; row: number } {
+  largestChange(_u: ArrayLike<number>, x: ArrayLike<number>): { kelvin: number; row: number } {
     const largest = { kelvin: 0, row: 0 };
     for (let row = 0; row < this.size; row++) {
       if (Math.abs(x[row]) > largest.kelvin) Object.assign(largest, { kelvin: Math.abs(x[row]), row });

@@ -11,7 +11,8 @@ export const wholeStage = (cycle: LaidCycle): Interval => ({ stage: 0, from: cyc
 export function systemOf(project: Project, storage: StorageKind): { system: WallSystem; state: HeatState } {
   const cycle = layCycle(project);
   const layers = wallLayers(project);
-  const grid = gridOf(project.settings, layers, cycle, temperatureRange(layers, cycle));
+  const { kind, innerRadius } = project.part;
+  const grid = gridOf(project.settings, layers, cycle, temperatureRange(layers, cycle), { kind, innerRadius });
   const system = new WallSystem(layers, grid, cycle, storage);
   const state = startState(system);
   system.enter(wholeStage(cycle), state.unknowns, state.stored, state.through);
@@ -38,6 +39,7 @@ export function steadyWithSource(system: WallSystem, { unknowns: u }: HeatState,
 /** One unknown that decays by itself: du/dt = −rate u, from `initial`. The mode of a body whose shape is exact. */
 export class DecayingMode implements HeatSystem {
   readonly size = 1;
+  readonly heatRows = 1;
   readonly heats = 1;
   readonly linear = true;
   readonly points = 1;
@@ -81,9 +83,12 @@ export class DecayingMode implements HeatSystem {
   rateTimes(_heat: number, x: Float64Array): number {
     return -this.rate * x[0];
   }
+  evenOutRates() {
+    return { diagonal: Float64Array.of(this.rate), beside: new Float64Array(0) };
+  }
   heldChanges(): void {}
   hold(): void {}
-  largestChange(x: ArrayLike<number>): { kelvin: number; row: number } {
+  largestChange(_u: ArrayLike<number>, x: ArrayLike<number>): { kelvin: number; row: number } {
     return { kelvin: Math.abs(x[0]), row: 0 };
   }
   report(u: Float64Array, _time: number, out: Float64Array): void {

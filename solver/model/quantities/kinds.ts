@@ -16,6 +16,9 @@ export type QuantityKind =
   | 'heatFlux'
   | 'contactResistance'
   | 'temperatureRate'
+  | 'latentHeat'
+  | 'volumetricHeat'
+  | 'velocity'
   | 'fraction';
 
 /** Which units numbers are shown in, and what a bare number means. */
@@ -135,6 +138,42 @@ export const KINDS: Readonly<Record<QuantityKind, Kind>> = {
       { text: 'kcal/kg·K', factor: KILOCALORIE },
     ],
     stored: 'J/(kg*K)',
+  },
+  latentHeat: {
+    noun: 'a heat per mass',
+    display: { SI: 'kJ/kg', US: 'BTU/lb' },
+    example: { SI: '334 kJ/kg', US: '144 BTU/lb' },
+    units: [
+      { text: 'kJ/kg', factor: 1000 },
+      { text: 'J/kg', factor: 1 },
+      { text: 'BTU/lb', factor: BTU / POUND },
+      { text: 'kcal/kg', factor: KILOCALORIE },
+    ],
+    stored: 'J/kg',
+  },
+  volumetricHeat: {
+    noun: 'a heat source',
+    display: { SI: 'kW/m³', US: 'BTU/h·ft³' },
+    example: { SI: '5 kW/m³', US: '480 BTU/(h·ft³)' },
+    units: [
+      { text: 'kW/m³', factor: 1000 },
+      { text: 'W/m³', factor: 1 },
+      { text: 'MW/m³', factor: 1e6 },
+      { text: 'BTU/h·ft³', factor: BTU / (HOUR * FOOT ** 3) },
+    ],
+    stored: 'W/m^3',
+  },
+  velocity: {
+    noun: 'a velocity',
+    display: { SI: 'm/s', US: 'ft/s' },
+    example: { SI: '2 m/s', US: '6.5 ft/s' },
+    units: [
+      { text: 'm/s', factor: 1 },
+      { text: 'ft/s', factor: FOOT },
+      { text: 'km/h', factor: 1000 / HOUR },
+      { text: 'ft/min', factor: FOOT / 60 },
+    ],
+    stored: 'm/s',
   },
   filmCoefficient: {
     noun: 'a film coefficient',

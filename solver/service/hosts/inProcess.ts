@@ -1,5 +1,5 @@
 /** The solver in the same process, for commands: two ends of a channel in memory, messages handed over as they are. */
-import { startSolve } from '../../planning';
+import { startRefining, startSolve } from '../../planning';
 import type { Link, Port } from '../protocol';
 import { startRunner } from '../runner';
 
@@ -41,6 +41,7 @@ export function startInProcess(log?: (fault: unknown) => void): Promise<Link> {
   const { stop } = startRunner({
     port: its,
     start: (project) => startSolve(project, { now }),
+    refine: startRefining,
     now,
     later: (turn) => void setImmediate(turn),
     log,

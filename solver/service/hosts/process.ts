@@ -4,7 +4,7 @@
  * The parent hands over one end of a channel whose other end the window holds, so that results go straight there. Each
  * port handed over gets a runner of its own; it ends with its port.
  */
-import { startSolve } from '../../planning';
+import { startRefining, startSolve } from '../../planning';
 import type { Port } from '../protocol';
 import { startRunner } from '../runner';
 
@@ -32,6 +32,7 @@ export function serve(parent: ParentPort): void {
       const runner = startRunner({
         port: portOf(given),
         start: (project) => startSolve(project, { now }),
+        refine: startRefining,
         now,
         later: (turn) => void setImmediate(turn),
         log,

@@ -1,5 +1,5 @@
 /** The solver in a browser: a Web Worker whose own messages are the port. */
-import { startSolve } from '../../planning';
+import { startRefining, startSolve } from '../../planning';
 import type { Port } from '../protocol';
 import { startRunner } from '../runner';
 import { channelTurns } from './turns';
@@ -19,4 +19,4 @@ const port: Port = {
 const now = (): number => performance.now();
 // eslint-disable-next-line no-console -- faults of ours are kept for those who mend them
 const log = (fault: unknown): void => console.error(fault);
-startRunner({ port, start: (project) => startSolve(project, { now }), now, later: channelTurns(), log });
+startRunner({ port, start: (project) => startSolve(project, { now }), refine: startRefining, now, later: channelTurns(), log });

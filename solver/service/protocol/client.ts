@@ -33,9 +33,14 @@ export interface Restarted {
 }
 export type ClientEvent = AboutJob | Restarted;
 
+export interface SolveOptions {
+  /** Whether the answers shall get their numerical uncertainty; if not given, those of a single case do. */
+  refine?: boolean | undefined;
+}
+
 export interface SolverClient {
   /** Asks for the cases of a plan's revision, superseding what runs; returns the number of the job. */
-  solve(cases: Project[], revision: number): number;
+  solve(cases: Project[], revision: number, options?: SolveOptions): number;
   /** Ends the job in hand: it comes to `done` with what was reached, or to `failed` (cancelled) when it had not begun. */
   cancel(): void;
   /** True while a job is owed its end. */
@@ -49,6 +54,7 @@ interface Job {
   job: number;
   revision: number;
   cases: Project[];
+  refine: boolean | undefined;
   /** A cancelled job is not repeated. */
   cancelled?: true;
 }
@@ -72,8 +78,8 @@ export function createSolverClient({ start, after }: { start: () => Promise<Link
 
   const ask = (): void => {
     if (current === null) return;
-    const { job, revision, cases } = current;
-    post({ type: 'solve', job, revision, cases });
+    const { job, revision, cases, refine } = current;
+    post({ type: 'solve', job, revision, cases, ...(refine === undefined ? {} : { refine }) });
   };
 
   const fail = (code: FailureCode, detail?: string): void => {
@@ -153,10 +159,10 @@ export function createSolverClient({ start, after }: { start: () => Promise<Link
   }
 
   return {
-    solve(cases, revision) {
+    solve(cases, revision, { refine } = {}) {
       fail('superseded');
       const job = ++jobs;
-      current = { job, revision, cases };
+      current = { job, revision, cases, refine };
       losses = 0;
       silentTicks = 0;
       if (phase === 'off') launch();

@@ -3,4 +3,12 @@ export { FAILURES, type FailureCode } from './failures';
 export { PROTOCOL_VERSION, type AboutJob, type Answered, type FromSolver, type ToSolver } from './messages';
 export { type After, type Link, type Port } from './port';
 export { MAX_CASES, readFromSolver, readToSolver } from './read';
-export { createSolverClient, SILENCE_S, START_S, type ClientEvent, type Restarted, type SolverClient } from './client';
+export {
+  createSolverClient,
+  SILENCE_S,
+  START_S,
+  type ClientEvent,
+  type Restarted,
+  type SolveOptions,
+  type SolverClient,
+} from './client';

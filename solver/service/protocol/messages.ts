@@ -12,8 +12,11 @@ import type { FailureCode } from './failures';
 export const PROTOCOL_VERSION = 1;
 
 export type ToSolver =
-  /** Job numbers rise; `revision` is the plan's, and comes back with every message about the job. At least one case. */
-  | { type: 'solve'; job: number; revision: number; cases: Project[] }
+  /**
+   * Job numbers rise; `revision` is the plan's, and comes back with every message about the job. At least one case. `refine`:
+   * whether the answers shall get their numerical uncertainty; absent, those of a single case do.
+   */
+  | { type: 'solve'; job: number; revision: number; cases: Project[]; refine?: boolean | undefined }
   | { type: 'cancel'; job: number }
   | { type: 'ping'; id: number };
 
@@ -32,10 +35,23 @@ export type FromSolver =
       time_s: number;
       end_s: number;
       stage: string;
+      /** 'refining': the run is over, and its answers are on the way to their uncertainty; the fraction counts that way. */
+      state?: 'refining' | undefined;
       fraction: number;
     }
-  /** All that is known of a case except its frames; `final` says that nothing will change any more. */
-  | { type: 'answers'; job: number; revision: number; case: number; final: boolean; result: Answered }
+  /**
+   * All that is known of a case except its frames; `final` says that nothing will change any more. `refining`: the run is
+   * over and its frames follow at once; only uncertainties, and with them verdicts that become thin, are still to come.
+   */
+  | {
+      type: 'answers';
+      job: number;
+      revision: number;
+      case: number;
+      final: boolean;
+      refining?: boolean | undefined;
+      result: Answered;
+    }
   /** Frames of a case, their buffers transferred. */
   | { type: 'frames'; job: number; revision: number; case: number; frames: Frames }
   /** One outcome a case; a case that was never begun is `cancelled` at 0 s. */

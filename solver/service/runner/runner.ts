@@ -5,9 +5,17 @@
  * cancel or a newer job takes effect. Nothing here knows a platform: the port, the clock and the way to let messages in are
  * given, so that tests run on made-up ones.
  */
-import { checkProject, wordProblem, type Frames, type Outcome, type Project } from '../../model';
-import type { Solving } from '../../planning';
-import { FAILURES, PROTOCOL_VERSION, readToSolver, type FailureCode, type FromSolver, type Port } from '../protocol';
+import { checkProject, wordProblem, type Frames, type Outcome, type Project, type RunResult } from '../../model';
+import type { Refining, Solving } from '../../planning';
+import {
+  FAILURES,
+  PROTOCOL_VERSION,
+  readToSolver,
+  type FailureCode,
+  type FromSolver,
+  type Port,
+  type ToSolver,
+} from '../protocol';
 
 /** Longest time without listening, ms. */
 export const SLICE_MS = 25;
@@ -22,6 +30,8 @@ const MAX_PROBLEMS = 8;
 export interface RunnerOptions {
   port: Port;
   start: (project: Project) => Solving;
+  /** Begins to find the uncertainty of the answers of a run that has ended; without it they get none. */
+  refine?: (project: Project, result: RunResult) => Refining;
   /** A clock that never runs backwards, ms. */
   now: () => number;
   /** Calls back after the messages that have arrived were heard. */
@@ -35,7 +45,9 @@ interface Job {
   readonly revision: number;
   readonly projects: Project[];
   readonly outcomes: Outcome[];
+  readonly refined: boolean;
   solving: Solving | null;
+  refining: Refining | null;
   cancelled: boolean;
   fraction: number;
   nextProgress: number;
@@ -43,7 +55,7 @@ interface Job {
 }
 
 /** Greets the port and answers it until `stop`. A fault inside a job fails that job; the runner goes on. */
-export function startRunner({ port, start, now, later, log }: RunnerOptions): { stop: () => void } {
+export function startRunner({ port, start, refine, now, later, log }: RunnerOptions): { stop: () => void } {
   let current: Job | null = null;
   let turning = false;
 
@@ -74,7 +86,7 @@ export function startRunner({ port, start, now, later, log }: RunnerOptions): { 
     fail({ job: job as number, revision: Number.isSafeInteger(revision) ? (revision as number) : 0 }, 'not-understood');
   }
 
-  function take({ job, revision, cases }: { job: number; revision: number; cases: unknown[] }): void {
+  function take({ job, revision, cases, refine: asked }: Extract<ToSolver, { type: 'solve' }>): void {
     if (current !== null && job <= current.job) return fail({ job, revision }, 'superseded');
     if (current !== null) fail(current, 'superseded');
     current = null;
@@ -86,7 +98,9 @@ export function startRunner({ port, start, now, later, log }: RunnerOptions): { 
       revision,
       projects: checked.projects,
       outcomes: [],
+      refined: asked ?? cases.length === 1,
       solving: null,
+      refining: null,
       cancelled: false,
       fraction: 0,
       nextProgress: began + PROGRESS_MS,
@@ -117,19 +131,45 @@ export function startRunner({ port, start, now, later, log }: RunnerOptions): { 
 
   function slice(job: Job): void {
     const until = now() + SLICE_MS;
+    if (job.refining !== null) return sliceRefining(job, job.refining, until);
     const solving = (job.solving ??= start(job.projects[job.outcomes.length]));
     if (job.cancelled) solving.cancel();
-    if (solving.advance(() => now() >= until)) closeCase(job, solving);
+    if (solving.advance(() => now() >= until)) endRun(job, solving);
     else reportWay(job, solving);
   }
 
-  function closeCase(job: Job, solving: Solving): void {
-    const { frames, ...result } = solving.result();
-    const about = { job: job.job, revision: job.revision, case: job.outcomes.length };
-    post({ type: 'answers', ...about, final: true, result });
+  /** The run of a case is over: its answers go out, and are final unless their uncertainty is still sought. */
+  function endRun(job: Job, solving: Solving): void {
+    const ended = solving.result();
+    const refining = (job.refined && !job.cancelled && refine?.(job.projects[job.outcomes.length], ended)) || null;
+    const { frames, ...result } = ended;
+    const about = aboutCase(job);
+    post({ type: 'answers', ...about, final: refining === null, ...(refining === null ? {} : { refining: true }), result });
     post({ type: 'frames', ...about, frames }, buffersOf(frames));
-    job.outcomes.push(result.outcome);
     job.solving = null;
+    job.refining = refining;
+    if (refining === null) closeCase(job, result.outcome);
+  }
+
+  function sliceRefining(job: Job, refining: Refining, until: number): void {
+    if (job.cancelled) refining.cancel();
+    if (refining.advance(() => now() >= until)) {
+      const { frames: _frames, ...result } = refining.result();
+      post({ type: 'answers', ...aboutCase(job), final: true, result });
+      job.refining = null;
+      closeCase(job, result.outcome);
+    } else if (now() >= job.nextProgress) {
+      const { outcome, stages } = refining.result();
+      const at = { time_s: outcome.reached_s, end_s: outcome.reached_s, stage: stages.at(-1)?.stage ?? '' };
+      post({ type: 'progress', ...aboutCase(job), ...at, state: 'refining', fraction: refining.progress() });
+      job.nextProgress = now() + PROGRESS_MS;
+    }
+  }
+
+  const aboutCase = (job: Job) => ({ job: job.job, revision: job.revision, case: job.outcomes.length });
+
+  function closeCase(job: Job, outcome: Outcome): void {
+    job.outcomes.push(outcome);
     job.nextAnswers = now() + ANSWERS_MS;
     if (job.cancelled) while (job.outcomes.length < job.projects.length) job.outcomes.push(neverBegun());
     if (job.outcomes.length < job.projects.length) return;
@@ -138,7 +178,7 @@ export function startRunner({ port, start, now, later, log }: RunnerOptions): { 
   }
 
   function reportWay(job: Job, solving: Solving): void {
-    const about = { job: job.job, revision: job.revision, case: job.outcomes.length };
+    const about = aboutCase(job);
     if (now() >= job.nextProgress) {
       const { time_s, end_s, stage, fraction } = solving.progress();
       job.fraction = Math.min(1, Math.max(job.fraction, (job.outcomes.length + fraction) / job.projects.length));

@@ -19,6 +19,8 @@ const answer = (requirement: string, verdict: Verdict, more: Partial<Answer> = {
   unit: '°C',
   margin_unit: 'K',
   uncertainty: null,
+  value_uncertainty: null,
+  time_uncertainty_s: null,
   position_m: null,
   spans: [],
   ...more,

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { decimate, extent, historyAt, indexAt, indexOfLargest } from '../../../app/draw';
+import { crossings, decimate, extent, historyAt, indexAt, indexOfLargest } from '../../../app/draw';
 
 const ramp = { time: [0, 10, 20, 30], value: [0, 100, 100, 40] };
 
@@ -18,6 +18,13 @@ describe('histories', () => {
 
   it('take the value after a jump at the time of the jump', () => {
     expect(historyAt({ time: [0, 10, 10, 20], value: [0, 0, 50, 50] }, 10)).toBe(50);
+  });
+
+  it('cross a limit going up and going down, and do not cross by touching', () => {
+    expect(crossings(ramp, 70)).toEqual([7, 25]);
+    expect(crossings(ramp, 100)).toEqual([10]);
+    expect(crossings({ time: [0, 1, 2], value: [5, 3, 5] }, 3)).toEqual([1]);
+    expect(crossings(ramp, 101)).toEqual([]);
   });
 
   it('know their largest value and their extent without minding gaps', () => {

@@ -10,6 +10,7 @@ import {
   paintRow,
   placeLabels,
   seriesStyle,
+  spread,
 } from '../../../app/draw';
 
 describe('layLayers', () => {
@@ -79,6 +80,14 @@ describe('placeLabels', () => {
 
   it('gives none where there is no room', () => {
     expect(placeLabels([label(100, 100)], bounds, [bounds])).toEqual([null]);
+  });
+});
+
+describe('spread', () => {
+  it('pushes labels apart without leaving the column', () => {
+    expect(spread([10, 12, 14], 13, 0, 100)).toEqual([10, 23, 36]);
+    expect(spread([80, 90, 95], 13, 0, 100)).toEqual([74, 87, 100]);
+    expect(spread([10, 50], 13, 0, 100)).toEqual([10, 50]);
   });
 });
 

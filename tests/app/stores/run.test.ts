@@ -2,6 +2,8 @@ import { createPinia, setActivePinia } from 'pinia';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { setStep, setThickness, setTitle } from '../../../app/commands';
 import { useProjectStore, useRunStore } from '../../../app/stores';
+import type { Frames } from '../../../solver/model';
+import type { Answered } from '../../../solver/service/protocol';
 import { fakeSolver, type FakeSolver } from '../support/fakeSolver';
 import { lining } from '../support/lining';
 
@@ -29,6 +31,23 @@ describe('a run', () => {
     expect(useRunStore().state).toBe('solving');
     solved();
     expect([useRunStore().state, useRunStore().outdated]).toEqual(['live', false]);
+  });
+
+  it('shows its values while their uncertainty is still on the way, and takes that over when it comes', () => {
+    const about = { job: 1, revision: solver.asked[0].revision, case: 0 };
+    const result = { answers: [], stability: null, warnings: [] } as unknown as Answered;
+    const frames = { time_s: new Float64Array([0]) } as Frames;
+    solver.tell({ type: 'answers', ...about, final: false, refining: true, result });
+    solver.tell({ type: 'frames', ...about, frames });
+    expect([useRunStore().state, useRunStore().waiting]).toEqual(['live', false]);
+    solver.tell({ type: 'progress', ...about, time_s: 1, end_s: 2, stage: 'heat', state: 'refining', fraction: 0.5 });
+    expect(useRunStore().progress).toBeNull();
+    const doubted = { answers: [], stability: null, warnings: [{ code: 'doubt' }] } as unknown as Answered;
+    solver.tell({ type: 'answers', ...about, final: true, result: doubted });
+    const outcome = { reason: 'finished', reached_s: 100, stage: null, message: null } as const;
+    solver.tell({ type: 'done', job: 1, revision: about.revision, outcomes: [outcome] });
+    expect(useRunStore().result).toEqual(doubted);
+    expect(useRunStore().frames).toEqual(frames);
   });
 
   it('waits for a pause in typing, and is asked for once', () => {

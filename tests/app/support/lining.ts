@@ -19,6 +19,7 @@ export function lining(change: (project: Project) => Project = (project) => proj
     ],
     part: {
       kind: 'wall',
+      innerRadius: 0,
       layers: [
         { id: 'l1', name: 'Lining', material: 'brick', thickness: 0.15, contact: 0 },
         { id: 'l2', name: 'Backing', material: 'brick', thickness: 0.075, contact: 0.004 },

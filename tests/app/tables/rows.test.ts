@@ -32,7 +32,7 @@ const choose = (cell: Cell, value: string): Command => {
 describe('stages', () => {
   it('say their course, their end and when that is', () => {
     const rows = stageRows(plan, laid, 'SI');
-    expect(texts(rows[0])).toEqual(['Heat', '2 segments to 525 °C, 6 h', 'at target', '6 h 00 min', '6 h 00 min']);
+    expect(texts(rows[0])).toEqual(['Heat', '2 segments to 525 °C, 6 h 00 min', 'at target', '6 h 00 min', '6 h 00 min']);
     expect(texts(rows[1])).toEqual(['Soak', 'holds', 'after a time', '2 h 00 min', '8 h 00 min']);
   });
 
@@ -81,9 +81,9 @@ describe('segments', () => {
 
   it('are said in words', () => {
     expect(courseInWords({ segments: [{ to: 180, rate: 20 / 3600 }] }, 20, 'SI')).toBe('to 180 °C at 20 K/h');
-    expect(courseInWords({ segments: [{ to: 180, duration: 10800 }] }, 20, 'SI')).toBe('to 180 °C in 3 h');
+    expect(courseInWords({ segments: [{ to: 180, duration: 10800 }] }, 20, 'SI')).toBe('to 180 °C in 3 h 00 min');
     expect(courseInWords({ segments: [{ to: 180, duration: 0 }] }, 20, 'US')).toBe('jumps to 356 °F');
-    expect(courseInWords({ segments: [{ hold: 60 }] }, 20, 'SI')).toBe('holds for 1 min');
+    expect(courseInWords({ segments: [{ hold: 60 }] }, 20, 'SI')).toBe('holds for 1 min 00 s');
     expect(courseInWords({ segments: [] }, 20, 'SI')).toBe('holds');
   });
 
@@ -96,22 +96,22 @@ describe('segments', () => {
 
 describe('exposures', () => {
   it('say what each face meets', () => {
-    expect(exposureRows(plan, 0, laid.stages[0]).map(texts)).toEqual([
+    expect(exposureRows(plan, 0, laid.stages[0], 'SI').map(texts)).toEqual([
       ['Hot face', 'film', '45 W/m²·K', 'Gas', 'no offset'],
       ['Cold face', 'film', '10 W/m²·K', 'constant', '25 °C'],
     ]);
-    expect(texts(exposureRows(plan, 1, laid.stages[1])[0])).toEqual([
+    expect(texts(exposureRows(plan, 1, laid.stages[1], 'SI')[0])).toEqual([
       'Hot face',
       'fixed temperature',
       '',
       'own ramps',
       '1 segment',
     ]);
-    expect(texts(exposureRows(plan, 2, laid.stages[2])[0])).toEqual(['Hot face', 'insulated', '', '', '']);
+    expect(texts(exposureRows(plan, 2, laid.stages[2], 'SI')[0])).toEqual(['Hot face', 'insulated', '', '', '']);
   });
 
   it('become ramps of their own that start where they are', () => {
-    const after = applyCommand(plan, choose(exposureRows(plan, 0, laid.stages[0])[0].cells[3], 'ramps'));
+    const after = applyCommand(plan, choose(exposureRows(plan, 0, laid.stages[0], 'SI')[0].cells[3], 'ramps'));
     expect(after.cycle.stages[0].exposures.start).toMatchObject({ surroundings: { start: 25, segments: [] } });
     expect(ownRamps(after.cycle.stages[0])).toEqual([{ face: 'start', key: 'surroundings' }]);
     expect(problemsIn(after)).toEqual([]);
@@ -129,7 +129,8 @@ describe('exposures', () => {
   });
 
   it('a film coefficient can go over time, and back', () => {
-    const act = (project: Project) => exposureRows(project, 0, layCycle(project).stages[0])[0].more?.[0].command?.() as Command;
+    const act = (project: Project) =>
+      exposureRows(project, 0, layCycle(project).stages[0], 'SI')[0].more?.[0].command?.() as Command;
     const over = applyCommand(plan, act(plan));
     expect(ownRamps(over.cycle.stages[0])).toEqual([{ face: 'start', key: 'coefficient' }]);
     expect(applyCommand(over, act(over)).cycle.stages[0].exposures.start).toMatchObject({ coefficient: 45 });
@@ -139,10 +140,10 @@ describe('exposures', () => {
 describe('probes', () => {
   it('say how and where they are placed', () => {
     expect(probeRows(plan, 'SI').map(texts)).toEqual([
-      ['Face', 'face', 'Hot face', '0 mm'],
-      ['Middle', 'layer', 'Backing', '0.5'],
-      ['Behind', 'interface', 'in Shell, at Backing', '225 mm'],
-      ['Deep', 'depth', 'from Hot face', '200 mm'],
+      ['Face', 'at a face', 'Hot face', '0 mm'],
+      ['Middle', 'in a layer', 'Backing', '0.5'],
+      ['Behind', 'at an interface', 'in Shell, at Backing', '225 mm'],
+      ['Deep', 'at a depth', 'from Hot face', '200 mm'],
     ]);
   });
 

@@ -65,6 +65,8 @@ const answer: Answer = {
   unit: 's',
   margin_unit: 's',
   uncertainty: null,
+  value_uncertainty: null,
+  time_uncertainty_s: null,
   position_m: null,
   spans: [],
 };
@@ -76,6 +78,15 @@ describe('an answer in words', () => {
     expect(marginInWords({ ...answer, margin: 1.25, margin_unit: 'K' }, 'SI')).toBe('+1.3 K');
     expect(marginInWords({ ...answer, margin: 10, margin_unit: 'K' }, 'US')).toBe('+18 F°');
     expect(marginInWords({ ...answer, margin: null }, 'SI')).toBe('');
+  });
+
+  it('has its doubt beside it once that is known, and digits that follow the doubt', () => {
+    const kelvin = { ...answer, margin: 26.4321, margin_unit: 'K' as const };
+    expect(marginInWords({ ...kelvin, uncertainty: 17 }, 'SI')).toBe('+26 K ± 17 K');
+    expect(marginInWords({ ...kelvin, uncertainty: 0.4 }, 'SI')).toBe('+26.4 K ± 0.4 K');
+    expect(marginInWords({ ...kelvin, uncertainty: 0.0001 }, 'SI')).toBe('+26.43 K ± 0.01 K');
+    expect(marginInWords({ ...answer, uncertainty: 120 }, 'SI')).toBe('+3 h 44 min ± 2 min 00 s');
+    expect(marginInWords({ ...answer, uncertainty: 0.2 }, 'SI')).toBe('+3 h 44 min ± 1 s');
   });
 
   it('stays what it was until waiting has lasted, and is then called old', () => {

@@ -38,8 +38,7 @@ describe.each(['light', 'dark'] as const)('in %s', (colorScheme) => {
     await host.page.emulateMedia({ colorScheme });
     await expectText(host.page, 'Slowest point');
     await expectText(host.page, 'Live');
-    const closed = host.page.locator('.head-toggle[aria-expanded=false]');
-    while ((await closed.count()) > 0) await closed.first().click();
+    for (const toggle of await host.page.locator('.head-toggle[aria-expanded=false]').all()) await toggle.click();
     expect(await breaches()).toEqual([]);
     await host.page.locator('[data-place="part.layers[0].thickness"]').focus();
     await host.page.keyboard.press('F2');

@@ -16,7 +16,9 @@ const answer: Answer = {
   margin: -10,
   unit: '°C',
   margin_unit: 's',
-  uncertainty: null,
+  uncertainty: 0.5,
+  value_uncertainty: 0.01,
+  time_uncertainty_s: null,
   position_m: null,
   spans: [{ from_s: 0, to_s: 100, kind: 'counting' }],
 };
@@ -46,7 +48,7 @@ const result: RunResult = {
     temperature_C: new Float32Array(0),
     faceFlux_W_m2: new Float32Array(0),
   },
-  energy: { basis: 'J/m²', in_J: 1, byFace_J: { start: 1, end: 0 }, stored_J: 1, closure: 0, lag_K: 0 },
+  energy: { basis: 'J/m²', in_J: 1, byFace_J: { start: 1, end: 0 }, generated_J: 0, stored_J: 1, closure: 0, lag_K: 0 },
   stability: null,
   solver: {
     scheme: 'automatic',
@@ -58,6 +60,7 @@ const result: RunResult = {
     kernels: 'typescript',
     wall_s: 0.01,
   },
+  refinement: [{ of: 'accuracy', runs: 4, order: 0.9 }],
   warnings: [{ code: 'c', message: 'm', place: null }],
 };
 

@@ -1,6 +1,6 @@
 /** A made-up run that takes a fixed number of steps, each of which costs time on a made-up clock. */
 import type { Frames, RunResult } from '../../../solver/model';
-import type { Solving } from '../../../solver/planning';
+import type { Refining, Solving } from '../../../solver/planning';
 
 export interface FakeRun {
   steps: number;
@@ -47,5 +47,20 @@ function resultOf(reached: number, cancelled: boolean): RunResult {
     stage: null,
     message: null,
   };
-  return { outcome, answers: [], frames } as unknown as RunResult;
+  return { outcome, answers: [], stages: [], refinement: null, frames } as unknown as RunResult;
+}
+
+/** A made-up refining, in as many steps; refined, a result has an empty list in place of null. */
+export function fakeRefining(clock: { pass(ms: number): void }, run: FakeRun, base: RunResult): Refining {
+  const solving = fakeSolving(clock, run);
+  let cancelled = false;
+  return {
+    advance: (shouldPause) => solving.advance(shouldPause),
+    progress: () => solving.progress().fraction,
+    result: () => (cancelled || solving.taken < run.steps ? base : { ...base, refinement: [] }),
+    cancel() {
+      cancelled = true;
+      solving.cancel();
+    },
+  };
 }

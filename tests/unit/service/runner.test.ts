@@ -1,12 +1,12 @@
 import { describe, expect, it } from 'vitest';
-import { newProject, type Project } from '../../../solver/model';
+import { newProject, type Project, type RunResult } from '../../../solver/model';
 import { PROTOCOL_VERSION, readFromSolver, type FromSolver } from '../../../solver/service/protocol';
 import { ANSWERS_MS, PROGRESS_MS, SLICE_MS, startRunner } from '../../../solver/service/runner';
 import { manualClock } from '../../protocol/fakes';
-import { fakeSolving, type FakeRun } from './fakeSolving';
+import { fakeRefining, fakeSolving, type FakeRun } from './fakeSolving';
 
 /** A runner on made-up time; messages wait, as on a real port, until it listens between two slices. */
-function setUp(run: FakeRun | ((project: Project) => FakeRun) = { steps: 10, step_ms: 1 }) {
+function setUp(run: FakeRun | ((project: Project) => FakeRun) = { steps: 10, step_ms: 1 }, refined?: FakeRun) {
   const clock = manualClock();
   const said: (FromSolver & { at: number })[] = [];
   const transferred: ArrayBuffer[][] = [];
@@ -32,6 +32,7 @@ function setUp(run: FakeRun | ((project: Project) => FakeRun) = { steps: 10, ste
       solvings.push(solving);
       return solving;
     },
+    ...(refined === undefined ? {} : { refine: (_: Project, base: RunResult) => fakeRefining(clock, refined, base) }),
     now: clock.now,
     later: (next) => void (turn = next),
     log: (fault) => void faults.push(fault),
@@ -297,5 +298,70 @@ describe('what cannot be run', () => {
     rig.tell({ type: 'ping', id: 1 });
     rig.runOut();
     expect(rig.said).toHaveLength(said);
+  });
+});
+
+describe('a job whose answers get their uncertainty', () => {
+  const short = { steps: 10, step_ms: 1 };
+  const answers = (rig: ReturnType<typeof setUp>) => rig.said.flatMap((message) => (message.type === 'answers' ? [message] : []));
+
+  it('gives the values first, with their frames, and ends with the uncertainties', () => {
+    const rig = setUp(short, short);
+    rig.tell(solve(1));
+    rig.runOut();
+    expect(rig.kinds()).toEqual(['ready', 'answers', 'frames', 'answers', 'done']);
+    expect(answers(rig)).toMatchObject([
+      { final: false, refining: true, result: { refinement: null } },
+      { final: true, result: { refinement: [] } },
+    ]);
+    expect(answers(rig)[1]).not.toHaveProperty('refining');
+    for (const message of rig.said) expect(readFromSolver(message)).not.toBeNull();
+  });
+
+  it('listens between slices of the refining, and says how far it is', () => {
+    const rig = setUp(short, LONG);
+    rig.tell(solve(1));
+    rig.runOut();
+    const progress = rig.said.flatMap((message) => (message.type === 'progress' ? [message] : []));
+    expect(progress.length).toBeGreaterThan(10);
+    expect(progress.every(({ state, time_s, end_s }) => state === 'refining' && time_s === end_s)).toBe(true);
+    const fractions = progress.map(({ fraction }) => fraction);
+    expect(fractions).toEqual([...fractions].sort((a, b) => a - b));
+    for (let i = 1; i < progress.length; i++) expect(progress[i].at - progress[i - 1].at).toBeGreaterThanOrEqual(PROGRESS_MS);
+  });
+
+  it('keeps its values, and is a finished run, when it is cancelled on the way', () => {
+    const rig = setUp(short, LONG);
+    rig.tell(solve(1));
+    for (let i = 0; i < 5; i++) rig.goOn();
+    rig.tell({ type: 'cancel', job: 1 });
+    rig.runOut();
+    expect(rig.kinds().slice(-2)).toEqual(['answers', 'done']);
+    expect(answers(rig).at(-1)).toMatchObject({ final: true, result: { refinement: null } });
+    expect(rig.said.at(-1)).toMatchObject({ outcomes: [{ reason: 'finished' }] });
+  });
+
+  it('makes way for a newer job on the way', () => {
+    const rig = setUp(short, LONG);
+    rig.tell(solve(1));
+    for (let i = 0; i < 5; i++) rig.goOn();
+    rig.tell(solve(2));
+    rig.goOn();
+    expect(rig.said.find((message) => message.type === 'failed')).toMatchObject({ job: 1, code: 'superseded' });
+    rig.runOut();
+    expect(rig.said.at(-1)).toMatchObject({ type: 'done', job: 2 });
+  });
+
+  it.each([
+    ['one case, nothing said', [plan], undefined, 1],
+    ['one case, not wanted', [plan], false, 0],
+    ['two cases, nothing said', [plan, plan], undefined, 0],
+    ['two cases, wanted', [plan, plan], true, 2],
+  ])('%s', (_, cases, refine, refined) => {
+    const rig = setUp(short, short);
+    rig.tell({ ...solve(1, cases), refine });
+    rig.runOut();
+    expect(answers(rig).filter(({ refining }) => refining)).toHaveLength(refined);
+    expect(answers(rig).filter(({ final }) => final)).toHaveLength(cases.length);
   });
 });

@@ -92,7 +92,7 @@ describe('the place that sets the limit', () => {
     const layers = wallLayers(project);
     const cycle = layCycle(project);
     const grid = gridOf(project.settings, layers, cycle, temperatureRange(layers, cycle));
-    const { capacity, loss, beside, depth } = wallVolumes(layers, grid, cycle.stages[0].exposures);
+    const { capacity, loss, beside, depth } = wallVolumes(layers, grid, cycle.stages[0], temperatureRange(layers, cycle));
     // Power iteration on the symmetric system, by its three diagonals.
     let vector = Array.from(depth, (_, i) => 1 + 0.1 * (i % 3));
     for (let iteration = 0; iteration < 3000; iteration++) {
