@@ -7,8 +7,15 @@
  */
 import { create, createUnitDependencies, unitDependencies } from 'mathjs';
 
-const math = create({ createUnitDependencies, unitDependencies });
-math.createUnit('cal', { definition: '4.1868 J', prefixes: 'short' }); // International Table
+function makeUnits() {
+  const math = create({ createUnitDependencies, unitDependencies });
+  math.createUnit('cal', { definition: '4.1868 J', prefixes: 'short' }); // International Table
+  return math;
+}
+
+let units: ReturnType<typeof makeUnits> | undefined;
+/** Made when the first unit is put together: it takes a tenth of a second, which no start should wait for. */
+const allUnits = (): ReturnType<typeof makeUnits> => (units ??= makeUnits());
 
 /** Symbols that the unit parser lacks, or reads as something else (C and F are coulomb and farad to it). */
 const SYMBOLS: Readonly<Record<string, string>> = {
@@ -77,7 +84,7 @@ export function compoundFactor(text: string, stored: string): number | null {
     const words = translate(reading);
     if (words === null || words === '') continue;
     try {
-      return math.unit(1, words).toNumber(stored);
+      return allUnits().unit(1, words).toNumber(stored);
     } catch {
       // not a unit, or not of this kind, in this reading
     }
