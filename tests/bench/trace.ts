@@ -9,12 +9,17 @@ export interface TraceEvent {
   /** Start and length, µs. */
   ts: number;
   dur?: number;
+  /** Length on the processor, µs: without the time that other processes took. */
+  tdur?: number;
   args?: { name?: string; data?: { isMainFrame?: boolean } };
 }
 
 const CATEGORIES = 'devtools.timeline,disabled-by-default-devtools.timeline,__metadata';
+/** Handing the frame over to the compositor: the last thing that the main thread does for it. */
+const END_OF_FRAME = 'Commit';
 /** Script, style, layout and paint on the page's main thread; what lies inside another is counted with it. */
 const WORK = new Set([
+  END_OF_FRAME,
   'FireAnimationFrame',
   'FunctionCall',
   'EvaluateScript',
@@ -26,7 +31,6 @@ const WORK = new Set([
   'PrePaint',
   'Paint',
   'Layerize',
-  'Commit',
   'UpdateLayerTree',
   'IntersectionObserverController::computeIntersections',
   'HitTest',
@@ -46,29 +50,42 @@ export async function traced(page: Page, act: () => Promise<void>): Promise<Trac
   return events;
 }
 
-/** The work of each frame that the page's main thread made, ms, and the frames a second. */
-export function frameWork(events: readonly TraceEvent[]): { works: number[]; perSecond: number } {
+export interface FrameWork {
+  /** Work of each frame, ms on the clock and ms on the processor. */
+  clock: number[];
+  processor: number[];
+  perSecond: number;
+}
+
+/** The work of each frame that the page's main thread made. */
+export function frameWork(events: readonly TraceEvent[]): FrameWork {
   const { pid, tid } = busiestRenderer(events);
-  const own = events.filter((event) => event.pid === pid && event.tid === tid).sort((a, b) => a.ts - b.ts);
-  const frames = own.filter(({ name }) => name === 'BeginMainThreadFrame').map(({ ts }) => ts);
-  const works = new Array<number>(Math.max(0, frames.length - 1)).fill(0);
-  let frame = 0;
-  let done = 0;
-  for (const { name, ph, ts, dur = 0 } of own) {
-    if (ph !== 'X' || !WORK.has(name) || ts < done) continue;
+  const own = events.filter((event) => event.pid === pid && event.tid === tid && event.ph === 'X' && WORK.has(event.name));
+  own.sort((a, b) => a.ts - b.ts || (b.dur ?? 0) - (a.dur ?? 0));
+  const clock: number[] = [];
+  const processor: number[] = [];
+  const ends: number[] = [];
+  let [onClock, onProcessor, done] = [0, 0, 0];
+  for (const { name, ts, dur = 0, tdur = dur } of own) {
+    if (ts < done) continue;
     done = ts + dur;
-    while (frame < frames.length - 1 && ts >= frames[frame + 1]) frame++;
-    if (ts >= frames[0] && frame < works.length) works[frame] += dur / 1000;
+    onClock += dur / 1000;
+    onProcessor += tdur / 1000;
+    if (name !== END_OF_FRAME) continue;
+    clock.push(onClock);
+    processor.push(onProcessor);
+    ends.push(done);
+    [onClock, onProcessor] = [0, 0];
   }
-  const seconds = (frames[frames.length - 1] - frames[0]) / 1e6;
-  return { works, perSecond: works.length / seconds };
+  const seconds = (ends[ends.length - 1] - ends[0]) / 1e6;
+  return { clock, processor, perSecond: (ends.length - 1) / seconds };
 }
 
 /** The page's main thread: of all renderers the one that made most frames. */
 function busiestRenderer(events: readonly TraceEvent[]): { pid: number; tid: number } {
   const counts = new Map<string, number>();
   for (const { name, pid, tid } of events) {
-    if (name === 'BeginMainThreadFrame') counts.set(`${pid} ${tid}`, (counts.get(`${pid} ${tid}`) ?? 0) + 1);
+    if (name === END_OF_FRAME) counts.set(`${pid} ${tid}`, (counts.get(`${pid} ${tid}`) ?? 0) + 1);
   }
   const [most] = [...counts].sort((a, b) => b[1] - a[1]);
   if (most === undefined) throw new Error('the trace has no frame');

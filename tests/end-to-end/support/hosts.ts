@@ -95,7 +95,7 @@ export async function launchElectron(args: string[] = [], userData?: string): Pr
       program.kill('SIGKILL');
       await app.close().catch(() => undefined);
       screen.close();
-      if (userData === undefined) await rm(settings, { recursive: true, force: true });
+      if (userData === undefined) await rm(settings, { recursive: true, force: true, maxRetries: 10, retryDelay: 200 });
     },
   };
 }
@@ -145,7 +145,7 @@ export async function launchUnattended(args: string[] = []): Promise<Unattended>
       program.kill('SIGKILL');
       await once(program, 'exit');
       screen.close();
-      await rm(settings, { recursive: true, force: true });
+      await rm(settings, { recursive: true, force: true, maxRetries: 10, retryDelay: 200 });
     },
   };
 }
