@@ -63,8 +63,16 @@ function clearest(places: readonly TextPlace[], size: TextSize, drawn: DrawnCurv
 
 /** A text on a straight line: at the end, and on the side, where the curves are furthest. */
 export function placeLineLabel(line: { from: number; to: number; y: number }, size: TextSize, drawn: DrawnCurves): TextPlace {
-  const places = (['end', 'start'] as const).flatMap((anchor): TextPlace[] => {
-    const x = anchor === 'end' ? line.to - INSET : line.from + INSET;
+  const along = (share: number): number => line.from + share * (line.to - line.from);
+  const starts = [
+    { x: line.to - INSET, anchor: 'end' as const },
+    { x: line.from + INSET, anchor: 'start' as const },
+    // In the middle of a line that is long enough for it to be clear whose words they are.
+    ...(line.to - line.from > 4 * size.width
+      ? [0.75, 0.5, 0.25].map((share) => ({ x: along(share), anchor: 'start' as const }))
+      : []),
+  ];
+  const places = starts.flatMap(({ x, anchor }): TextPlace[] => {
     return [
       { x, y: line.y - LIFT, anchor },
       { x, y: line.y + LIFT + size.height - 3, anchor },

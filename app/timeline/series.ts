@@ -2,7 +2,7 @@
 import { type Answer, type LaidCycle, type Project, type Requirement } from '../../solver/model';
 import { formatQuantity, type QuantityKind, type UnitSystem } from '../../solver/model/quantities';
 import type { Answered } from '../../solver/service/protocol';
-import { seriesStyle, type History, type SeriesStyle } from '../draw';
+import { seriesStyle, type History, type Scale, type SeriesStyle } from '../draw';
 import { limitSign } from '../ui';
 
 export interface Series {
@@ -12,6 +12,8 @@ export interface Series {
   letter: string;
   style: SeriesStyle;
   history: History;
+  /** For a series of another kind than its lane: its unit and its own scale on the plot. */
+  own?: { kind: QuantityKind; decimals: number; scale: Scale };
 }
 
 /** A limit of a requirement, as a line over the time in which it counts. */

@@ -24,28 +24,51 @@ const follows = (stage: LaidStage, exposure: LaidExposure): boolean => {
 export const setPointActs = (laid: LaidCycle): boolean[] =>
   laid.stages.map((stage) => FACES.some((face) => follows(stage, stage.exposures[face])));
 
-/**
- * For each face what surrounds it where that is not the set-point; faces with the same course share one. A temperature that
- * never changes, such as the air of the hall, is no course.
- */
-export function otherCourses(project: Project, laid: LaidCycle): Course[] {
+/** One course a face, of what it meets; faces with the same course share one. NaN where `lineOf` gives nothing. */
+function coursesOf(
+  project: Project,
+  laid: LaidCycle,
+  lineOf: (stage: LaidStage, exposure: LaidExposure) => Line | null,
+  nameOf: (face: string) => string,
+): Course[] {
   const courses: Course[] = [];
   for (const face of FACES) {
     const line: Line = { time: [], value: [] };
     for (const stage of laid.stages) {
-      const own = outside(stage.exposures[face]);
-      const shown = own !== null && !follows(stage, stage.exposures[face]) ? own : null;
-      line.time.push(...(shown?.time ?? [stage.start]));
-      line.value.push(...(shown?.value ?? [Number.NaN]));
+      const own = lineOf(stage, stage.exposures[face]);
+      line.time.push(...(own?.time ?? [stage.start]));
+      line.value.push(...(own?.value ?? [Number.NaN]));
     }
-    const values = line.value.filter(Number.isFinite);
-    if (values.length === 0 || (values.length === line.value.length && values.every((value) => value === values[0]))) continue;
+    if (!line.value.some(Number.isFinite)) continue;
     const twin = courses.find((course) => sameCourse(course.line, line));
-    if (twin === undefined) courses.push({ key: face, name: project.part.faces[face].name, line });
-    else twin.name = 'Both faces';
+    if (twin === undefined) courses.push({ key: face, name: nameOf(project.part.faces[face].name), line });
+    else twin.name = nameOf('Both faces');
   }
   return courses;
 }
+
+const isConstant = ({ value }: Line): boolean => value.every((other) => other === value[0]);
+
+/**
+ * For each face what surrounds it where that is not the set-point. A temperature that never changes, such as the air of the
+ * hall, is no course.
+ */
+export const otherCourses = (project: Project, laid: LaidCycle): Course[] =>
+  coursesOf(
+    project,
+    laid,
+    (stage, exposure) => (follows(stage, exposure) ? null : outside(exposure)),
+    (face) => face,
+  ).filter(({ line }) => !isConstant(line));
+
+/** The heat flux that is imposed on each face, W/m². */
+export const fluxCourses = (project: Project, laid: LaidCycle): Course[] =>
+  coursesOf(
+    project,
+    laid,
+    (_, exposure) => (exposure.kind === 'flux' ? exposure.flux : null),
+    (face) => `${face}, flux`,
+  ).map((course) => ({ ...course, key: `${course.key} flux` }));
 
 const sameCourse = (a: Line, b: Line): boolean =>
   a.time.length === b.time.length &&
