@@ -14,7 +14,7 @@ beforeEach(async () => {
 afterEach(async () => {
   await host?.close();
   host = null;
-  await rm(folder, { recursive: true, force: true });
+  await rm(folder, { recursive: true, force: true, maxRetries: 10, retryDelay: 200 });
 });
 
 async function file(name: string, text: string): Promise<string> {
